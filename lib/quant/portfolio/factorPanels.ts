@@ -1,6 +1,5 @@
 import { normalCdf, normalDensity } from "../maths/normal";
-import type { AmountGrid } from "./amountGrid";
-import type { FactorNames } from "./oneFactorLaw";
+import type { FactorNames } from "./factorNames";
 
 const HIGHEST_FACTOR = 12.5;
 const WIDEST_PANEL = 4;
@@ -29,10 +28,12 @@ export function settledFrom(names: FactorNames): number {
  * Panel boundaries on [low, high] fitted to the names: a panel is no wider than a few times the factor distance over
  * which the conditional mean moves by its own deviation, nor than the distance to the nearest name's transition.
  */
-export function panelBoundaries(grid: AmountGrid, names: FactorNames, low: number, high: number): number[] {
-  const sizes = grid.shares.map(
-    (share) => share.steps + share.weights.reduce((sum, weight, k) => sum + k * weight, 0),
-  );
+export function panelBoundaries(
+  sizes: readonly number[],
+  names: FactorNames,
+  low: number,
+  high: number,
+): number[] {
   const boundaries = [low];
   let at = low;
   while (at < high) {

@@ -2,6 +2,7 @@ import { ConditionalLaw } from "../kernel/recursion";
 import { type ConditionalFamily, type MixtureAccuracy, mixOverFactor } from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
 import type { AmountGrid } from "./amountGrid";
+import { ConditionalProbabilities, type FactorNames } from "./factorNames";
 import { panelBoundaries, settledFrom } from "./factorPanels";
 import type { AmountLaw } from "./lossLaw";
 
@@ -9,52 +10,7 @@ import type { AmountLaw } from "./lossLaw";
 export const MIXTURE_ACCURACY: MixtureAccuracy = { absolute: 1e-12, relative: 1e-8 };
 
 /** Below this factor value nothing is left of the normal law that a figure could show. */
-const LOWEST_FACTOR = -12.5;
-
-/** Names of a one-factor model at one date. */
-export interface FactorNames {
-  /** c_i: default thresholds, ±∞ allowed. */
-  readonly thresholds: Float64Array;
-  /** a_i in (−1, 1). */
-  readonly loadings: Float64Array;
-}
-
-/** Conditional default probability of each name, computed once for names that share threshold and loading. */
-export class ConditionalProbabilities {
-  readonly values: Float64Array;
-  private readonly scaledThreshold: Float64Array;
-  private readonly slope: Float64Array;
-  /** Index of an earlier name with the same threshold and loading, or the name's own. */
-  private readonly twin: Int32Array;
-
-  constructor({ thresholds, loadings }: FactorNames) {
-    const count = thresholds.length;
-    this.values = new Float64Array(count);
-    this.scaledThreshold = new Float64Array(count);
-    this.slope = new Float64Array(count);
-    this.twin = new Int32Array(count);
-    const seen = new Map<string, number>();
-    for (let i = 0; i < count; i++) {
-      const loading = loadings[i]!;
-      const scale = Math.sqrt((1 - loading) * (1 + loading));
-      this.scaledThreshold[i] = thresholds[i]! / scale;
-      this.slope[i] = loading / scale;
-      const key = `${thresholds[i]} ${loading}`;
-      this.twin[i] = seen.get(key) ?? i;
-      if (this.twin[i] === i) seen.set(key, i);
-    }
-  }
-
-  /** p_i(m) = Φ((c_i − a_i m)/√(1 − a_i²)). */
-  at(factor: number): Float64Array {
-    const { values, twin } = this;
-    for (let i = 0; i < values.length; i++) {
-      values[i] =
-        twin[i] === i ? normalCdf(this.scaledThreshold[i]! - this.slope[i]! * factor) : values[twin[i]!]!;
-    }
-    return values;
-  }
-}
+export const LOWEST_FACTOR = -12.5;
 
 /** The recursion on a grid as a family of conditional laws, judged by E[min(X, K)] and P(X > K) at the strikes. */
 export class GridFamily implements ConditionalFamily {
@@ -149,12 +105,19 @@ export function oneFactorLaw(
     return finished(grid, family, 0, new Float64Array(family.probes), 1);
   }
   const high = settledFrom(names);
-  const boundaries = panelBoundaries(grid, names, LOWEST_FACTOR, high);
+  const boundaries = panelBoundaries(meanSizes(grid), names, LOWEST_FACTOR, high);
   const likely = expected ?? mixOverFactor(family, boundaries, { absolute: 1e9, relative: 1e9 }, null).totals;
   const fresh = expected ? family : new GridFamily(grid, conditional, strikes, top);
   const record = mixOverFactor(fresh, boundaries, MIXTURE_ACCURACY, likely);
   fresh.total[0]! += normalCdf(-high);
   return finished(grid, fresh, record.error, record.totals, record.evaluations);
+}
+
+/** Each name's amount in grid steps. */
+function meanSizes(grid: AmountGrid): number[] {
+  return grid.shares.map(
+    (share) => share.steps + share.weights.reduce((sum, weight, k) => sum + k * weight, 0),
+  );
 }
 
 function finished(
