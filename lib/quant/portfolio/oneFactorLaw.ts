@@ -105,7 +105,7 @@ export function oneFactorLaw(
     return finished(grid, family, 0, new Float64Array(family.probes), 1);
   }
   const high = settledFrom(names);
-  const boundaries = panelBoundaries(meanSizes(grid), names, LOWEST_FACTOR, high);
+  const boundaries = panelBoundaries(gridSizes(grid), names, LOWEST_FACTOR, high);
   const likely = expected ?? mixOverFactor(family, boundaries, { absolute: 1e9, relative: 1e9 }, null).totals;
   const fresh = expected ? family : new GridFamily(grid, conditional, strikes, top);
   const record = mixOverFactor(fresh, boundaries, MIXTURE_ACCURACY, likely);
@@ -114,7 +114,7 @@ export function oneFactorLaw(
 }
 
 /** Each name's amount in grid steps. */
-function meanSizes(grid: AmountGrid): number[] {
+export function gridSizes(grid: AmountGrid): number[] {
   return grid.shares.map(
     (share) => share.steps + share.weights.reduce((sum, weight, k) => sum + k * weight, 0),
   );

@@ -1,0 +1,248 @@
+import { normalCdf, normalQuantile } from "../maths/normal";
+import { type AmountGrid, amountGrid, exactUnit } from "./amountGrid";
+import { comonotonicLaw } from "./comonotonicLaw";
+import {
+  type LargePool,
+  largePoolAbove,
+  largePoolExcess,
+  largePoolFrom,
+  largePoolQuantile,
+  largePoolSquare,
+} from "./largePool";
+import {
+  type AmountLaw,
+  expectedBetween,
+  expectedSquareBetween,
+  isAtom,
+  probabilityAbove,
+  probabilityFrom,
+} from "./lossLaw";
+import { oneFactorLaw } from "./oneFactorLaw";
+import type { Portfolio } from "./portfolio";
+import { type SectorGroups, sectorLaw } from "./sectorLaw";
+import { MOST_SUBSET_NAMES, subsetLaw } from "./subsetLaw";
+
+/** Which sum of default amounts is meant. */
+export type AmountKind = "loss" | "recovery";
+
+/** How names depend on each other. */
+export type Dependence =
+  | { readonly kind: "flat"; readonly rho: number }
+  | { readonly kind: "loadings" }
+  | { readonly kind: "sector"; readonly within: number; readonly between: number };
+
+/** The law of the live names' sum of amounts at one date, in the questions a tranche asks of it. */
+export interface Distribution {
+  /** E[min((X − A)⁺, D − A)]. */
+  between(attachment: number, detachment: number): number;
+  /** E[min((X − A)⁺, D − A)²]. */
+  squareBetween(attachment: number, detachment: number): number;
+  above(strike: number): number;
+  from(strike: number): number;
+  /** Whether P(X > K) and P(X ≥ K) differ. */
+  isAtom(strike: number): boolean;
+  /** The atoms, or null for a law without (the large pool). */
+  readonly atoms: AmountLaw | null;
+  /** Smallest amount x with P(X ≤ x) ≥ level. */
+  quantile(level: number): number;
+  /** Bound on the error of E[min(X, K)] from quadrature. */
+  readonly error: number;
+}
+
+/** Lays amounts on grids and keeps the laws that were asked for. */
+export class PoolLaws {
+  private readonly grids = new Map<string, AmountGrid | null>();
+  private readonly groups: SectorGroups;
+  private readonly kept = new Map<string, Distribution>();
+  /** Conditional laws worked out so far: the machine-independent measure of the work. */
+  evaluations = 0;
+  private readonly lastTotals = new Map<string, Float64Array>();
+
+  constructor(
+    readonly portfolio: Portfolio,
+    private readonly law:
+      | { readonly kind: "finite"; readonly unit?: number | undefined }
+      | { readonly kind: "largePool" },
+    /** Strikes of the live sum at which a common law must be accurate. */
+    private readonly strikes: Record<AmountKind, readonly number[]>,
+  ) {
+    const bySector = new Map<string, number[]>();
+    for (const [k, name] of portfolio.live.entries()) {
+      const key = name.sector ?? "";
+      bySector.set(key, [...(bySector.get(key) ?? []), k]);
+    }
+    this.groups = [...bySector.values()];
+  }
+
+  /** Unit of the loss grid; null for the large pool and for laws over sets of defaults. */
+  get unit(): number | null {
+    if (this.law.kind === "largePool") return null;
+    return this.gridOf("loss", 3)?.unit ?? null;
+  }
+
+  /** Whether the loss grid holds every amount exactly. */
+  get isExact(): boolean {
+    if (this.law.kind === "largePool") return true;
+    const grid = this.gridOf("loss", 3);
+    return grid === null || grid.isExact;
+  }
+
+  /** The whole law at date j. `smooth` laws keep mean and variance; the others have no negative mass. */
+  whole(kind: AmountKind, j: number, dependence: Dependence, smooth = true): Distribution {
+    return this.distribution(kind, j, dependence, this.strikes[kind], Number.POSITIVE_INFINITY, smooth);
+  }
+
+  /** E[min(X, K)] at date j, only as much of the law worked out as the strike needs. */
+  expectedMinimum(kind: AmountKind, j: number, dependence: Dependence, strike: number): number {
+    if (strike <= 0) return 0;
+    return this.distribution(kind, j, dependence, [strike], strike, true).between(0, strike);
+  }
+
+  private distribution(
+    kind: AmountKind,
+    j: number,
+    dependence: Dependence,
+    strikes: readonly number[],
+    upTo: number,
+    smooth: boolean,
+  ): Distribution {
+    const key = `${kind} ${j} ${keyOf(dependence)} ${upTo} ${smooth}`;
+    let found = this.kept.get(key);
+    if (!found) {
+      found = this.make(kind, j, dependence, strikes, upTo, smooth);
+      this.kept.set(key, found);
+    }
+    return found;
+  }
+
+  private make(
+    kind: AmountKind,
+    j: number,
+    dependence: Dependence,
+    strikes: readonly number[],
+    upTo: number,
+    smooth: boolean,
+  ): Distribution {
+    const { live, thresholds } = this.portfolio;
+    const amounts = live.map((name) => (kind === "loss" ? name.loss : name.recovered));
+    if (this.law.kind === "largePool") return largePoolDistribution(this.singleClass(amounts, j, dependence));
+    const at = thresholds[j]!;
+    if (j === 0 || amounts.length === 0 || amounts.every((amount) => amount === 0)) return certainlyNothing();
+    if (dependence.kind === "flat" && dependence.rho === 1) return atomic(comonotonicLaw(amounts, at));
+    if (dependence.kind === "sector") return this.sectorDistribution(kind, dependence, at, strikes, smooth);
+    const loadings = this.loadingsOf(dependence);
+    const grid = this.gridOf(kind, smooth ? 3 : 2);
+    if (grid === null) return atomic(subsetLaw(amounts, { thresholds: at, loadings }, strikes));
+    const totalsKey = `${kind} ${keyOf(dependence)} ${upTo} ${smooth}`;
+    const law = oneFactorLaw(
+      grid,
+      { thresholds: at, loadings },
+      { strikes, upTo },
+      this.lastTotals.get(totalsKey) ?? null,
+    );
+    if (strikes.length > 0) this.lastTotals.set(totalsKey, law.totals);
+    this.evaluations += law.evaluations;
+    return atomic(law);
+  }
+
+  private sectorDistribution(
+    kind: AmountKind,
+    { within, between }: { within: number; between: number },
+    thresholds: Float64Array,
+    strikes: readonly number[],
+    smooth: boolean,
+  ): Distribution {
+    const amounts = this.portfolio.live.map((name) => (kind === "loss" ? name.loss : name.recovered));
+    if (between >= 1) return atomic(comonotonicLaw(amounts, thresholds));
+    const grid = this.gridOf(kind, smooth ? 3 : 2) ?? amountGrid(amounts, smooth ? 3 : 2);
+    if (within === between) {
+      const loadings = new Float64Array(amounts.length).fill(Math.sqrt(within));
+      return atomic(
+        oneFactorLaw(grid, { thresholds, loadings }, { strikes, upTo: Number.POSITIVE_INFINITY }),
+      );
+    }
+    return atomic(sectorLaw(grid, thresholds, this.groups, { within, between }, strikes));
+  }
+
+  private loadingsOf(dependence: Dependence): Float64Array {
+    const { live } = this.portfolio;
+    if (dependence.kind === "flat") return new Float64Array(live.length).fill(Math.sqrt(dependence.rho));
+    return Float64Array.from(live, (name) => name.loading ?? 0);
+  }
+
+  /** The grid of one kind of amount, or null where sets of defaults are enumerated instead. */
+  private gridOf(kind: AmountKind, landingPoints: 2 | 3): AmountGrid | null {
+    const key = `${kind} ${landingPoints}`;
+    const known = this.grids.get(key);
+    if (known !== undefined) return known;
+    const amounts = this.portfolio.live.map((name) => (kind === "loss" ? name.loss : name.recovered));
+    const imposed = this.law.kind === "finite" && kind === "loss" ? this.law.unit : undefined;
+    const isFew = amounts.length <= MOST_SUBSET_NAMES && imposed === undefined && exactUnit(amounts) === null;
+    const grid = isFew || amounts.length === 0 ? null : amountGrid(amounts, landingPoints, imposed);
+    this.grids.set(key, grid);
+    return grid;
+  }
+
+  /** The large pool's one class: the loss-weighted mean probability and the whole amount. */
+  private singleClass(amounts: readonly number[], j: number, dependence: Dependence): LargePool {
+    const { live, thresholds } = this.portfolio;
+    let weight = 0;
+    let weighted = 0;
+    let amount = 0;
+    for (const [k, name] of live.entries()) {
+      weight += name.loss;
+      weighted += name.loss * (j === 0 ? 0 : normalCdf(thresholds[j]![k]!));
+      amount += amounts[k]!;
+    }
+    const probability = weight > 0 ? weighted / weight : 0;
+    const correlation = dependence.kind === "flat" ? dependence.rho : 0;
+    return { threshold: normalQuantile(probability), lossGivenDefault: amount, correlation };
+  }
+}
+
+function keyOf(dependence: Dependence): string {
+  if (dependence.kind === "flat") return `flat ${dependence.rho}`;
+  if (dependence.kind === "sector") return `sector ${dependence.within} ${dependence.between}`;
+  return "loadings";
+}
+
+function certainlyNothing(): Distribution {
+  return atomic({ amounts: new Float64Array([0]), masses: new Float64Array([1]), overflow: 0, error: 0 });
+}
+
+function atomic(law: AmountLaw): Distribution {
+  return {
+    between: (attachment, detachment) => expectedBetween(law, attachment, detachment),
+    squareBetween: (attachment, detachment) => expectedSquareBetween(law, attachment, detachment),
+    above: (strike) => probabilityAbove(law, strike),
+    from: (strike) => probabilityFrom(law, strike),
+    isAtom: (strike) => isAtom(law, strike),
+    atoms: law,
+    quantile: (level) => atomicQuantile(law, level),
+    error: law.error,
+  };
+}
+
+function atomicQuantile(law: AmountLaw, level: number): number {
+  const { amounts, masses } = law;
+  let above = law.overflow;
+  for (let i = amounts.length - 1; i >= 0; i--) {
+    above += masses[i]!;
+    if (above > 1 - level + 1e-14) return amounts[i]!;
+  }
+  return 0;
+}
+
+function largePoolDistribution(pool: LargePool): Distribution {
+  return {
+    between: (attachment, detachment) =>
+      largePoolExcess(pool, attachment) - largePoolExcess(pool, detachment),
+    squareBetween: (attachment, detachment) => largePoolSquare(pool, attachment, detachment),
+    above: (strike) => largePoolAbove(pool, strike),
+    from: (strike) => largePoolFrom(pool, strike),
+    isAtom: () => false,
+    atoms: null,
+    quantile: (level) => largePoolQuantile(pool, level),
+    error: 1e-15,
+  };
+}
