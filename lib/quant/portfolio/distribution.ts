@@ -98,6 +98,13 @@ export class PoolLaws {
     return this.distribution(kind, j, dependence, [strike], strike, true).between(0, strike);
   }
 
+  /** E[min(X, K)] of the loss at date j and a correlation that will not be asked for again: nothing is kept. */
+  expectedMinimumOnce(j: number, rho: number, strike: number): number {
+    return strike <= 0
+      ? 0
+      : this.make("loss", j, { kind: "flat", rho }, [strike], strike, true).between(0, strike);
+  }
+
   private distribution(
     kind: AmountKind,
     j: number,
