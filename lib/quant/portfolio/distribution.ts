@@ -98,6 +98,13 @@ export class PoolLaws {
     return this.distribution(kind, j, dependence, [strike], strike, true).between(0, strike);
   }
 
+  /** The same pool with laws of its own, to be dropped after use: a search over correlations keeps nothing. */
+  forOneDependence(): PoolLaws {
+    const copy = new PoolLaws(this.portfolio, this.law, this.strikes);
+    for (const [key, grid] of this.grids) copy.grids.set(key, grid);
+    return copy;
+  }
+
   /** E[min(X, K)] of the loss at date j and a correlation that will not be asked for again: nothing is kept. */
   expectedMinimumOnce(j: number, rho: number, strike: number): number {
     return strike <= 0
