@@ -1,4 +1,4 @@
-import type { z } from "zod";
+import { z } from "zod";
 import { parseDay } from "../quant/market/calendar";
 import type { PricingProblem } from "./problem";
 import { LIMITS, type PricingRequest, requestSchema } from "./request";
@@ -17,6 +17,14 @@ export function checkRequest(raw: unknown): Checked {
   if (!parsed.success)
     return { ok: false, problems: [{ code: "form", path: "", message: "This is not a pricing request." }] };
   return { ok: true, request: parsed.data };
+}
+
+/** Problems of the names of a pool alone, by the rules of the request; paths start with `pool`. */
+export function poolNameProblems(names: unknown): PricingProblem[] {
+  const raw = { pool: names };
+  const parsed = z.object({ pool: requestSchema.shape.pool }).safeParse(raw);
+  const form = parsed.success ? [] : problemsOf(parsed.error, raw);
+  return withoutRepeats([...form, ...poolProblems(asArray(names), ["pool"], raw)]);
 }
 
 /** Zod's issues as problems, with the row's id in the words. */

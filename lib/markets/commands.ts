@@ -1,0 +1,119 @@
+import { randomUUID } from "node:crypto";
+import { notFound, staleVersion } from "../platform/errors";
+import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
+import { mayEdit, need } from "../workspaces/policy";
+import { checkMarket } from "./check";
+import { archiveInput, copyInput, createInput, type MarketContent, saveInput } from "./schema";
+
+const create = defineCommand({
+  name: "markets.create",
+  input: createInput,
+  async run(context, { workspaceId, name, pricingDate, content }) {
+    await asEditor(context, workspaceId);
+    checkMarket(pricingDate, content);
+    return { marketId: await makeMarket(context, workspaceId, name, pricingDate, content) };
+  },
+});
+
+const save = defineCommand({
+  name: "markets.save",
+  input: saveInput,
+  async run(context, { workspaceId, marketId, version, name, pricingDate, content }) {
+    await asEditor(context, workspaceId);
+    const { tx, record, emit } = context;
+    const before = await marketIn(context, workspaceId, marketId, true);
+    if (before.version !== version) {
+      const { name: savedName, pricingDate: savedDate, content: savedContent } = before;
+      throw staleVersion("market", {
+        version: before.version,
+        name: savedName,
+        pricingDate: savedDate,
+        content: savedContent,
+      });
+    }
+    checkMarket(pricingDate, content);
+    await tx.market.update({
+      where: { id: marketId },
+      data: { name, pricingDate, content, version: version + 1 },
+    });
+    await record({
+      workspaceId,
+      kind: "market.saved",
+      subjectKind: "market",
+      subjectId: marketId,
+      before: { name: before.name, pricingDate: before.pricingDate, content: before.content },
+      after: { name, pricingDate, content },
+    });
+    await emit({ workspaceId, kind: "market.saved", payload: { marketId, version: version + 1 } });
+    return { version: version + 1 };
+  },
+});
+
+const copy = defineCommand({
+  name: "markets.copy",
+  input: copyInput,
+  async run(context, { workspaceId, marketId, name, pricingDate }) {
+    await asEditor(context, workspaceId);
+    const market = await marketIn(context, workspaceId, marketId);
+    const content = market.content as MarketContent;
+    checkMarket(pricingDate, content);
+    return { marketId: await makeMarket(context, workspaceId, name, pricingDate, content) };
+  },
+});
+
+const archive = defineCommand({
+  name: "markets.archive",
+  input: archiveInput,
+  async run(context, { workspaceId, marketId, archived }) {
+    await asEditor(context, workspaceId);
+    const { tx, now, record, emit } = context;
+    await marketIn(context, workspaceId, marketId);
+    await tx.market.update({ where: { id: marketId }, data: { archivedAt: archived ? now : null } });
+    const kind = archived ? "market.archived" : "market.restored";
+    await record({ workspaceId, kind, subjectKind: "market", subjectId: marketId });
+    await emit({ workspaceId, kind, payload: { marketId } });
+    return null;
+  },
+});
+
+async function makeMarket(
+  { tx, actor, now, record, emit }: CommandContext,
+  workspaceId: string,
+  name: string,
+  pricingDate: string,
+  content: MarketContent,
+): Promise<string> {
+  const id = randomUUID();
+  await tx.market.create({
+    data: { id, workspaceId, name, pricingDate, content, createdById: actor.userId, createdAt: now },
+  });
+  await record({
+    workspaceId,
+    kind: "market.created",
+    subjectKind: "market",
+    subjectId: id,
+    after: { name, pricingDate, content },
+  });
+  await emit({ workspaceId, kind: "market.created", payload: { marketId: id } });
+  return id;
+}
+
+async function asEditor(context: QueryContext, workspaceId: string): Promise<void> {
+  const member = await context.member(workspaceId);
+  need(mayEdit(member), member.role, "change markets");
+}
+
+/** The market, if it is the workspace's; locked when it is about to be written. */
+export async function marketIn(
+  { tx }: QueryContext,
+  workspaceId: string,
+  marketId: string,
+  isLocked = false,
+) {
+  if (isLocked) await tx.$queryRaw`SELECT id FROM "market" WHERE id = ${marketId} FOR UPDATE`;
+  const market = await tx.market.findFirst({ where: { id: marketId, workspaceId } });
+  if (!market) throw notFound("market");
+  return market;
+}
+
+export const commands = { create, save, copy, archive };

@@ -1,0 +1,2 @@
+/** The notification channel; payload "<workspaceId> <eventId>". */
+export const CHANNEL = "loadline_events";

@@ -1,0 +1,108 @@
+import type { z } from "zod";
+import { Prisma } from "@/lib/generated/prisma/client";
+import type { Actor } from "./accounts/actor";
+import { type Membership, roles } from "./accounts/actor";
+import type { Database, Transaction } from "./db/client";
+import { notFound, type Problem, Refusal, refuse } from "./errors";
+import { CHANNEL } from "./events/channel";
+import type { Command, CommandContext, Query } from "./operation";
+
+/** Any registered operation, whatever its input and output. */
+export type AnyOperation = Command<string, never, unknown> | Query<string, never, unknown>;
+
+/** On whose behalf, on what, and when. */
+export interface Caller {
+  readonly database: Database;
+  readonly actor: Actor | null;
+  readonly now?: Date;
+}
+
+const ATTEMPTS = 4;
+
+/**
+ * Runs one operation: parse (all problems at once), signed in, then everything in one transaction. A transaction that
+ * lost a race with another is tried again.
+ * @throws Refusal with data for every expected reason.
+ */
+export async function execute<Input, Output>(
+  operation: Command<string, Input, Output> | Query<string, Input, Output>,
+  raw: unknown,
+  caller: Caller,
+): Promise<Output> {
+  const { actor, database } = caller;
+  if (!actor) throw refuse("signedOut", "signedOut", "Sign in first.");
+  const parsed = operation.input.safeParse(raw);
+  if (!parsed.success) throw new Refusal("invalid", inputProblems(parsed.error));
+  for (let attempt = 1; ; attempt++) {
+    try {
+      return await database.$transaction((tx) =>
+        operation.run(contextOf(tx, actor, caller.now ?? new Date()), parsed.data),
+      );
+    } catch (error) {
+      if (attempt >= ATTEMPTS || !isLostRace(error)) throw error;
+    }
+  }
+}
+
+/** Zod's issues as problems. */
+export function inputProblems(error: z.ZodError): Problem[] {
+  return error.issues.map((issue) => ({
+    code: "invalid",
+    path: issue.path.map(String).join("."),
+    message: issue.message,
+  }));
+}
+
+function isLostRace(error: unknown): boolean {
+  return error instanceof Prisma.PrismaClientKnownRequestError && ["P2034", "P2002"].includes(error.code);
+}
+
+function contextOf(tx: Transaction, actor: Actor, now: Date): CommandContext {
+  return {
+    tx,
+    actor,
+    now,
+    member: (workspaceId) => membershipOf(tx, workspaceId, actor.userId),
+    record: async ({ before, after, dealId, ...activity }) => {
+      await tx.activity.create({
+        data: {
+          ...activity,
+          actorId: actor.userId,
+          dealId: dealId ?? null,
+          ...jsonField("before", before),
+          ...jsonField("after", after),
+          at: now,
+        },
+      });
+    },
+    emit: async (event) => {
+      await tx.$executeRaw`SELECT pg_advisory_xact_lock(hashtext(${event.workspaceId}))`;
+      const { id } = await tx.event.create({
+        data: {
+          workspaceId: event.workspaceId,
+          dealId: event.dealId ?? null,
+          kind: event.kind,
+          payload: event.payload as Prisma.InputJsonObject,
+          at: now,
+        },
+      });
+      await tx.$executeRaw`SELECT pg_notify(${CHANNEL}, ${`${event.workspaceId} ${id}`})`;
+    },
+  };
+}
+
+function jsonField(name: "before" | "after", value: unknown): Record<string, Prisma.InputJsonValue> {
+  return value === undefined ? {} : { [name]: value as Prisma.InputJsonValue };
+}
+
+/** The actor's place in a workspace; other workspaces do not exist. */
+export async function membershipOf(
+  tx: Transaction,
+  workspaceId: string,
+  userId: string,
+): Promise<Membership> {
+  const member = await tx.member.findUnique({ where: { workspaceId_userId: { workspaceId, userId } } });
+  const role = roles.find((known) => known === member?.role);
+  if (!member || !role) throw notFound("workspace");
+  return { workspaceId, userId, role };
+}

@@ -1,0 +1,87 @@
+import { z } from "zod";
+import { refuse } from "../platform/errors";
+import { defineQuery } from "../platform/operation";
+import { hashOfToken } from "./commands";
+import { mayOf } from "./policy";
+import { inWorkspace, tokenInput } from "./schema";
+
+const mine = defineQuery({
+  name: "workspaces.mine",
+  input: z.strictObject({}),
+  async run({ tx, actor }) {
+    const rows = await tx.member.findMany({
+      where: { userId: actor.userId },
+      include: { workspace: true },
+      orderBy: { createdAt: "asc" },
+    });
+    return {
+      actor,
+      workspaces: rows.map(({ workspace, role }) => ({ id: workspace.id, name: workspace.name, role })),
+    };
+  },
+});
+
+const open = defineQuery({
+  name: "workspaces.open",
+  input: inWorkspace,
+  async run({ tx, actor, member }, { workspaceId }) {
+    const { role } = await member(workspaceId);
+    const workspace = await tx.workspace.findUniqueOrThrow({ where: { id: workspaceId } });
+    return { id: workspace.id, name: workspace.name, role, actor, may: mayOf({ role }) };
+  },
+});
+
+const people = defineQuery({
+  name: "workspaces.people",
+  input: inWorkspace,
+  async run({ tx, member, now }, { workspaceId }) {
+    const self = await member(workspaceId);
+    const may = mayOf(self);
+    const members = await tx.member.findMany({
+      where: { workspaceId },
+      include: { user: true },
+      orderBy: { createdAt: "asc" },
+    });
+    const invitations = may.manage
+      ? await tx.invitation.findMany({
+          where: { workspaceId, status: "pending", expiresAt: { gt: now } },
+          orderBy: { createdAt: "desc" },
+        })
+      : [];
+    return {
+      may,
+      members: members.map(({ user, role, createdAt }) => ({
+        userId: user.id,
+        name: user.name,
+        email: user.email,
+        role,
+        since: createdAt.toISOString(),
+        isSelf: user.id === self.userId,
+      })),
+      invitations: invitations.map(({ id, role, email, expiresAt }) => ({
+        id,
+        role,
+        email,
+        expiresAt: expiresAt.toISOString(),
+      })),
+    };
+  },
+});
+
+/** What an invitation link leads to; known to whoever holds the link. */
+const invitation = defineQuery({
+  name: "workspaces.invitation",
+  input: tokenInput,
+  async run({ tx, now }, { token }) {
+    const found = await tx.invitation.findUnique({
+      where: { tokenHash: hashOfToken(token) },
+      include: { workspace: true, inviter: true },
+    });
+    if (!found || found.status !== "pending" || found.expiresAt < now) {
+      throw refuse("notFound", "invitation", "This invitation is not open any more: ask for a new one.");
+    }
+    return { workspace: found.workspace.name, role: found.role, inviter: found.inviter.name };
+  },
+});
+
+export const queries = { mine, open, people, invitation };
