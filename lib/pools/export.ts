@@ -1,64 +1,102 @@
 import Papa from "papaparse";
-import type { NameInput } from "../pricing/request";
+import type { CreditInput, NameInput } from "../pricing/request";
 
-/** A text cell that a spreadsheet would take for a formula gets a leading apostrophe; numbers never do. */
+/** A cell: text, number, or nothing. */
+export type Cell = string | number | null;
+
+/**
+ * A text cell that a spreadsheet would take for a formula gets a leading apostrophe (OWASP, CSV Injection), and so does one
+ * that looks as if it had got it already; plain numbers never do.
+ */
 export function safeCell(text: string): string {
-  return /^[=+\-@\t\r]/.test(text) ? `'${text}` : text;
+  const isNumber = /^[+-]?\d+([.,]\d+)*%?$/.test(text);
+  return /^'*[=+\-@\t\r]/.test(text) && !isNumber ? `'${text}` : text;
+}
+
+/** The text that `safeCell` was given. */
+export function plainCell(text: string): string {
+  return text.replace(/^'(?='*[=+\-@\t\r])/, "");
 }
 
 /** Rows as CSV with a byte-order mark, text cells made safe, numbers in full. */
-export function toCsv(
-  headers: readonly string[],
-  rows: readonly (readonly (string | number | null)[])[],
-): string {
-  const cells = rows.map((row) => row.map((cell) => (typeof cell === "string" ? safeCell(cell) : cell)));
-  return `﻿${Papa.unparse({ fields: [...headers], data: cells })}\r\n`;
+export function toCsv(headers: readonly string[], rows: readonly (readonly Cell[])[]): string {
+  const safe = (cell: Cell) => (typeof cell === "string" ? safeCell(cell) : cell);
+  const data = rows.map((row) => row.map(safe));
+  return `\ufeff${Papa.unparse({ fields: headers.map(safeCell), data })}\r\n`;
 }
 
-/** A pool's names as CSV that can be imported again. */
+interface Column {
+  readonly header: string;
+  cell(name: NameInput): Cell;
+}
+
+/** A pool's names as CSV, all decimals, with only the columns the pool needs; the import reads it back unchanged. */
 export function poolCsv(names: readonly NameInput[]): string {
-  const tenors = (kind: "spread" | "cumulative") =>
-    [
-      ...new Set(
-        names.flatMap(({ credit }) =>
-          credit.kind === kind && "nodes" in credit ? credit.nodes.map((node) => node.years) : [],
-        ),
-      ),
-    ].sort((a, b) => a - b);
-  const spreadYears = tenors("spread");
-  const cumulativeYears = tenors("cumulative");
-  const has = (kind: NameInput["credit"]["kind"]) => names.some(({ credit }) => credit.kind === kind);
-  const headers = [
-    "Id",
-    "Name",
-    "Sector",
-    "Notional",
-    "Recovery",
-    ...(names.some((name) => name.loading !== undefined) ? ["Loading"] : []),
-    ...spreadYears.map((years) => `Spread ${years}Y`),
-    ...cumulativeYears.map((years) => `Cumulative PD ${years}Y`),
-    ...(has("yearly") ? ["Yearly PD"] : []),
-    ...(has("hazard") ? ["Hazard rate"] : []),
-    ...(has("upfront") ? ["Upfront 5Y", "Coupon"] : []),
+  const columns = [...plainColumns(names), ...creditColumns(names)];
+  return toCsv(
+    columns.map((column) => column.header),
+    names.map((name) => columns.map((column) => column.cell(name))),
+  );
+}
+
+function plainColumns(names: readonly NameInput[]): Column[] {
+  const columns: Column[] = [
+    { header: "Id", cell: ({ id }) => id },
+    { header: "Name", cell: ({ name }) => name ?? "" },
+    { header: "Sector", cell: ({ sector }) => sector ?? "" },
+    { header: "Notional", cell: ({ notional }) => notional },
+    { header: "Recovery", cell: ({ recovery }) => recovery },
   ];
-  const rows = names.map(({ id, name, sector, notional, recovery, loading, credit }) => [
-    id,
-    name ?? "",
-    sector ?? "",
-    notional,
-    recovery,
-    ...(headers.includes("Loading") ? [loading ?? null] : []),
-    ...spreadYears.map((years) =>
-      credit.kind === "spread" ? (credit.nodes.find((node) => node.years === years)?.spread ?? null) : null,
-    ),
-    ...cumulativeYears.map((years) =>
+  if (names.some(({ loading }) => loading !== undefined))
+    columns.push({ header: "Loading", cell: ({ loading }) => loading ?? null });
+  return columns;
+}
+
+function creditColumns(names: readonly NameInput[]): Column[] {
+  const has = (kind: CreditInput["kind"]) => names.some(({ credit }) => credit.kind === kind);
+  const columns: Column[] = [];
+  for (const years of yearsOf(names, "spread")) {
+    const cell = ({ credit }: NameInput) =>
+      credit.kind === "spread" ? (credit.nodes.find((node) => node.years === years)?.spread ?? null) : null;
+    columns.push({ header: `Spread ${years}Y (decimal)`, cell });
+  }
+  for (const years of yearsOf(names, "cumulative")) {
+    const cell = ({ credit }: NameInput) =>
       credit.kind === "cumulative"
         ? (credit.nodes.find((node) => node.years === years)?.probability ?? null)
-        : null,
-    ),
-    ...(has("yearly") ? [credit.kind === "yearly" ? credit.probability : null] : []),
-    ...(has("hazard") ? [credit.kind === "hazard" ? credit.rate : null] : []),
-    ...(has("upfront") ? (credit.kind === "upfront" ? [credit.upfront, credit.coupon] : [null, null]) : []),
-  ]);
-  return toCsv(headers, rows);
+        : null;
+    columns.push({ header: `Cumulative PD ${years}Y (decimal)`, cell });
+  }
+  if (has("yearly")) {
+    const cell = ({ credit }: NameInput) => (credit.kind === "yearly" ? credit.probability : null);
+    columns.push({ header: "Yearly PD (decimal)", cell });
+  }
+  if (has("hazard"))
+    columns.push({
+      header: "Hazard rate",
+      cell: ({ credit }) => (credit.kind === "hazard" ? credit.rate : null),
+    });
+  for (const years of yearsOf(names, "upfront")) {
+    const cell = ({ credit }: NameInput) =>
+      credit.kind === "upfront" && credit.years === years ? credit.upfront : null;
+    columns.push({ header: `Upfront ${years}Y (decimal)`, cell });
+  }
+  if (has("upfront")) {
+    const cell = ({ credit }: NameInput) => (credit.kind === "upfront" ? credit.coupon : null);
+    columns.push({ header: "Coupon (decimal)", cell });
+  }
+  if (has("defaulted"))
+    columns.push({
+      header: "Status",
+      cell: ({ credit }) => (credit.kind === "defaulted" ? "defaulted" : ""),
+    });
+  return columns;
+}
+
+function yearsOf(names: readonly NameInput[], kind: "spread" | "cumulative" | "upfront"): number[] {
+  const years = names.flatMap(({ credit }) => {
+    if (credit.kind !== kind) return [];
+    return credit.kind === "upfront" ? [credit.years] : credit.nodes.map((node) => node.years);
+  });
+  return [...new Set(years)].sort((one, other) => one - other);
 }

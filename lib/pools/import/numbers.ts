@@ -1,7 +1,10 @@
-import type { ColumnUnit } from "./columns";
+/** How the numbers of a column are scaled. */
+export const columnUnits = ["plain", "percent", "basisPoints", "thousands", "millions"] as const;
+export type ColumnUnit = (typeof columnUnits)[number];
 
 /** Which mark separates whole and decimal part in a column. */
-export type DecimalMark = "." | ",";
+export const decimalMarks = [".", ","] as const;
+export type DecimalMark = (typeof decimalMarks)[number];
 
 /** A cell's number with the unit written in the cell itself, if any. */
 export interface CellNumber {
@@ -9,57 +12,85 @@ export interface CellNumber {
   readonly unit: ColumnUnit | null;
 }
 
-/** The decimal mark of a column, from whatever its cells prove; a point where nothing does. */
-export function decimalMark(cells: readonly string[]): DecimalMark {
-  let comma = 0;
-  let point = 0;
-  for (const cell of cells) {
-    const text = bare(cell);
-    const lastComma = text.lastIndexOf(",");
-    const lastPoint = text.lastIndexOf(".");
-    if (lastComma >= 0 && lastPoint >= 0) lastComma > lastPoint ? comma++ : point++;
-    else if (lastComma >= 0) {
-      if ((text.match(/,/g)?.length ?? 0) > 1) point++;
-      else if (!/^-?\d{1,3},\d{3}$/.test(text)) comma++;
-    } else if (lastPoint >= 0) {
-      if ((text.match(/\./g)?.length ?? 0) > 1) comma++;
-      else if (!/^-?\d{1,3}\.\d{3}$/.test(text)) point++;
-    }
-  }
-  return comma > point ? "," : ".";
+/** How many cells prove each decimal mark, and how many could be read with either. */
+export interface MarkEvidence {
+  readonly comma: number;
+  readonly point: number;
+  readonly either: number;
 }
 
-/** The number in a cell: thousands marks, currency signs, %, bp and parentheses understood; null when it is none. */
+/** Counts what cells prove about the decimal mark: 1.234,5 proves a comma, 0.400 a point, 8,000 nothing. */
+export function markEvidence(cells: readonly string[]): MarkEvidence {
+  const count = { comma: 0, point: 0, either: 0 };
+  for (const cell of cells) {
+    const found = provenMark(bare(cell));
+    if (found) count[found]++;
+  }
+  return count;
+}
+
+function provenMark(text: string): keyof MarkEvidence | null {
+  if (!/^[+-]?[\d.,'’ ]+(e[+-]?\d+)?$/i.test(text)) return null;
+  const commas = text.split(",").length - 1;
+  const points = text.split(".").length - 1;
+  if (commas + points === 0) return null;
+  if (commas > 0 && points > 0) return text.lastIndexOf(",") > text.lastIndexOf(".") ? "comma" : "point";
+  if (commas > 1) return "point";
+  if (points > 1) return "comma";
+  if (/^[+-]?[1-9]\d{0,2}[.,]\d{3}$/.test(text)) return "either";
+  return commas === 1 ? "comma" : "point";
+}
+
+/** Cells that stand for nothing. */
+export function isBlank(cell: string): boolean {
+  return /^(|[-–—.]+|n\/?a|n\.a\.|#n\/a|#value!|#ref!|null|none|nil)$/i.test(cell.trim());
+}
+
+const GROUPED = {
+  ".": /^[+-]?(?:\d{1,3}(?:,\d{3})+|\d{1,3}(?:['’ ]\d{3})+|\d+|(?=\.\d))(?:\.\d*)?(?:e[+-]?\d+)?$/i,
+  ",": /^[+-]?(?:\d{1,3}(?:\.\d{3})+|\d{1,3}(?:['’ ]\d{3})+|\d+|(?=,\d))(?:,\d*)?(?:e[+-]?\d+)?$/i,
+} as const;
+
+/**
+ * The number in a cell: thousands marks in whole groups of three, currency signs, %, bp, k and m, and negatives in
+ * parentheses are understood. Null where the cell is no number with that decimal mark: nothing is guessed.
+ */
 export function readNumber(cell: string, mark: DecimalMark): CellNumber | null {
-  const unit = /%/.test(cell) ? "percent" : /\bbps?\b\.?/i.test(cell) ? "basisPoints" : null;
   const isNegative = /^\s*\(.*\)\s*$/.test(cell);
   const text = bare(cell);
-  if (text === "") return null;
-  const thousands = mark === "," ? /[.'’\s]/g : /[,'’\s]/g;
-  const number = text.replace(thousands, "").replace(mark, ".");
-  if (!/^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(number)) return null;
-  const value = Number(number);
-  return Number.isFinite(value) ? { value: isNegative ? -value : value, unit } : null;
+  if (!GROUPED[mark].test(text)) return null;
+  const digits = text.replace(mark === "," ? /[.'’ ]/g : /[,'’ ]/g, "").replace(mark, ".");
+  const value = Number(digits);
+  return Number.isFinite(value) ? { value: isNegative ? -value : value, unit: unitOfCell(cell) } : null;
 }
 
-/** The cell without spaces around, currency, units and parentheses. */
+function unitOfCell(cell: string): ColumnUnit | null {
+  if (/%/.test(cell)) return "percent";
+  if (/\d\s*(bps?|basis points)\b/i.test(cell)) return "basisPoints";
+  if (/\d\s*(m|mn|mm|mio|million)\b/i.test(cell)) return "millions";
+  return /\d\s*(k|tsd)\b/i.test(cell) ? "thousands" : null;
+}
+
+/** The cell without outer spaces, currency, unit and parentheses; every kind of space and minus made plain. */
 function bare(cell: string): string {
   return cell
-    .replace(/[    \s]/g, " ")
-    .replace(/\b(bps?|eur|usd|gbp|chf|mio|mn|m)\b\.?/gi, "")
-    .replace(/[%€$£()]/g, "")
-    .replace(/−/g, "-")
-    .trim()
-    .replace(/(\d) (?=\d{3}\b)/g, "$1");
+    .replace(/[\u00a0\u2007\u2009\u202f\s]+/g, " ")
+    .replace(/\u2212/g, "-")
+    .replace(/\b(eur|usd|gbp|chf|jpy|sek|nok|dkk|cad|aud)\b/gi, "")
+    .replace(/(\d)\s*(bps?|basis points|mio|mn|mm|million|m|k|tsd)\b\.?/gi, "$1")
+    .replace(/[%€$£¥()]/g, "")
+    .trim();
 }
 
-/** A number in a unit as a decimal. */
-export function asDecimal(value: number, unit: ColumnUnit): number {
-  if (unit === "percent") return cleaned(value / 100);
-  return unit === "basisPoints" ? cleaned(value / 10_000) : value;
-}
+const FACTOR: Record<ColumnUnit, number> = {
+  plain: 1,
+  percent: 0.01,
+  basisPoints: 1e-4,
+  thousands: 1e3,
+  millions: 1e6,
+};
 
-/** 0.35 rather than 0.35000000000000003: the decimal that was meant. */
-function cleaned(value: number): number {
-  return Number(value.toPrecision(15));
+/** A number in a unit as a decimal or an amount: the decimal that was meant, 0.35 rather than 0.35000000000000003. */
+export function inUnit(value: number, unit: ColumnUnit): number {
+  return unit === "plain" ? value : Number((value * FACTOR[unit]).toPrecision(15));
 }
