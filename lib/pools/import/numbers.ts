@@ -82,15 +82,28 @@ function bare(cell: string): string {
     .trim();
 }
 
-const FACTOR: Record<ColumnUnit, number> = {
-  plain: 1,
-  percent: 0.01,
-  basisPoints: 1e-4,
-  thousands: 1e3,
-  millions: 1e6,
+const PLACES: Record<ColumnUnit, number> = {
+  plain: 0,
+  percent: -2,
+  basisPoints: -4,
+  thousands: 3,
+  millions: 6,
 };
 
-/** A number in a unit as a decimal or an amount: the decimal that was meant, 0.35 rather than 0.35000000000000003. */
+/** A number in a unit as a decimal or an amount: its decimal digits are shifted, so 35 % is 0.35 to the last bit. */
 export function inUnit(value: number, unit: ColumnUnit): number {
-  return unit === "plain" ? value : Number((value * FACTOR[unit]).toPrecision(15));
+  if (unit === "plain") return value;
+  const [digits, exponent = "0"] = String(value).split("e");
+  return Number(`${digits}e${Number(exponent) + PLACES[unit]}`);
+}
+
+/** The plain digits of a decimal or an amount in a unit; `inUnit` of them is the same number again. */
+export function digitsIn(value: number, unit: ColumnUnit): string {
+  const [mantissa = "", exponent = "0"] = Math.abs(value).toExponential().split("e");
+  const digits = mantissa.replace(".", "");
+  const point = Number(exponent) - PLACES[unit] + 1;
+  const whole = point <= 0 ? "0" : digits.slice(0, point).padEnd(point, "0");
+  const rest = point <= 0 ? "0".repeat(-point) + digits : digits.slice(point);
+  const fraction = rest.replace(/0+$/, "");
+  return `${value < 0 ? "-" : ""}${whole}${fraction ? `.${fraction}` : ""}`;
 }
