@@ -1,0 +1,19 @@
+"use client";
+
+import { createTheme, MantineProvider } from "@mantine/core";
+import type { ReactNode } from "react";
+
+const theme = createTheme({
+  primaryColor: "teal",
+  fontFamily: "system-ui, sans-serif",
+  headings: { sizes: { h1: { fontSize: "1.5rem" } } },
+});
+
+/** The visual language, light and dark, for everything below. */
+export function Providers({ children }: { children: ReactNode }) {
+  return (
+    <MantineProvider theme={theme} defaultColorScheme="auto">
+      {children}
+    </MantineProvider>
+  );
+}

@@ -1,0 +1,192 @@
+"use client";
+
+import { Alert, Button, Group, Stack, Text, TextInput, Title } from "@mantine/core";
+import Link from "next/link";
+import { useRouter } from "next/navigation";
+import { useDeferredValue, useMemo, useState } from "react";
+import { call } from "@/app/_ui/call";
+import { Problems } from "@/app/_ui/Problems";
+import { saveFile } from "@/app/_ui/saveFile";
+import type { Problem } from "@/lib/platform/errors";
+import type { ColumnReading } from "@/lib/pools/import/columns";
+import { type ImportReading, NO_TABLE, readNames } from "@/lib/pools/import/read";
+import { recogniseColumns } from "@/lib/pools/import/recognise";
+import { rejectedCsv } from "@/lib/pools/import/rejected";
+import { type ImportTable, readTable, withCell } from "@/lib/pools/import/table";
+import { ColumnChoices } from "./ColumnChoices";
+import { ImportPreview } from "./ImportPreview";
+import { ImportSource } from "./ImportSource";
+
+interface Target {
+  readonly id: string;
+  readonly name: string;
+  readonly currency: string;
+  readonly version: number;
+}
+
+interface Opened {
+  readonly table: ImportTable;
+  readonly columns: readonly ColumnReading[];
+}
+
+/** From a file or pasted text to a pool: choose, look, mend, take. Nothing is stored before everything fits. */
+export function ImportDesk({
+  workspaceId,
+  into,
+  mayEdit,
+}: {
+  workspaceId: string;
+  into: Target | null;
+  mayEdit: boolean;
+}) {
+  const router = useRouter();
+  const [name, setName] = useState(into?.name ?? "");
+  const [currency, setCurrency] = useState(into?.currency ?? "EUR");
+  const [opened, setOpened] = useState<Opened | null>(null);
+  const [trouble, setTrouble] = useState<string | null>(null);
+  const [refused, setRefused] = useState<readonly Problem[]>([]);
+  const [isBusy, setBusy] = useState(false);
+  const settled = useDeferredValue(opened);
+  const reading = useMemo(() => settled && readNames(settled.table, settled.columns), [settled]);
+
+  if (!mayEdit) {
+    return <Alert color="gray">As a reader of this workspace you cannot import: ask a structurer.</Alert>;
+  }
+
+  const open = (text: string, source: string | null) => {
+    const table = readTable(text);
+    setRefused([]);
+    setTrouble(table ? null : NO_TABLE);
+    setOpened(table && { table, columns: recogniseColumns(table) });
+    if (table && source && name === "") setName(source.replace(/\.[a-z]+$/i, ""));
+  };
+
+  const take = async (taken: ImportReading) => {
+    setBusy(true);
+    const names = [...taken.names];
+    const answer = into
+      ? await call("pools.save", {
+          workspaceId,
+          poolId: into.id,
+          version: into.version,
+          name,
+          currency,
+          names,
+        })
+      : await call("pools.create", { workspaceId, name, currency, names });
+    setBusy(false);
+    if (!answer.ok) return setRefused(answer.problems);
+    const poolId = into ? into.id : (answer.output as { poolId: string }).poolId;
+    router.push(`/w/${workspaceId}/pools/${poolId}`);
+    router.refresh();
+  };
+
+  return (
+    <Stack gap="md">
+      <Group justify="space-between">
+        <Title order={1}>{into ? `Import names into ${into.name}` : "Import a pool"}</Title>
+        <Button
+          component={Link}
+          variant="default"
+          href={`/w/${workspaceId}/pools${into ? `/${into.id}` : ""}`}
+        >
+          Cancel
+        </Button>
+      </Group>
+      <ImportSource onText={open} />
+      {trouble && (
+        <Alert color="red" role="alert">
+          {trouble}
+        </Alert>
+      )}
+      {opened && reading && (
+        <>
+          <ColumnChoices
+            table={opened.table}
+            columns={opened.columns}
+            onChange={(columns) => setOpened({ ...opened, columns })}
+          />
+          <ImportPreview
+            reading={reading}
+            titleLines={opened.table.titleLines}
+            onCell={(line, column, text) =>
+              setOpened({ ...opened, table: withCell(opened.table, line, column, text) })
+            }
+          />
+          <Group align="end">
+            <TextInput
+              label="Name of the pool"
+              value={name}
+              onChange={(event) => setName(event.currentTarget.value)}
+              error={problemAt(refused, "name")}
+            />
+            <TextInput
+              label="Currency"
+              w={90}
+              value={currency}
+              onChange={(event) => setCurrency(event.currentTarget.value.toUpperCase())}
+              error={problemAt(refused, "currency")}
+            />
+            <TakeButtons
+              reading={reading}
+              isBusy={isBusy}
+              replaces={into !== null}
+              onTake={() => take(reading)}
+              onRejected={() => saveFile(`${name || "pool"} rejected rows.csv`, rejectedCsv(reading))}
+            />
+          </Group>
+          <Problems
+            title="The pool was not stored"
+            problems={refused.filter(({ path }) => path !== "name" && path !== "currency")}
+          />
+        </>
+      )}
+    </Stack>
+  );
+}
+
+function problemAt(problems: readonly Problem[], path: string): string | null {
+  return problems.find((problem) => problem.path === path)?.message ?? null;
+}
+
+function TakeButtons({
+  reading,
+  isBusy,
+  replaces,
+  onTake,
+  onRejected,
+}: {
+  reading: ImportReading;
+  isBusy: boolean;
+  replaces: boolean;
+  onTake: () => void;
+  onRejected: () => void;
+}) {
+  const bad = reading.rows.length - reading.names.length;
+  const isWhole = bad === 0 && reading.tableProblems.length === 0;
+  const count = reading.names.length;
+  const words = `${count} ${count === 1 ? "name" : "names"}`;
+  return (
+    <>
+      <Button
+        onClick={onTake}
+        loading={isBusy}
+        disabled={reading.tableProblems.length > 0 || count === 0}
+        {...(isWhole ? {} : { color: "orange" })}
+      >
+        {replaces ? `Replace the pool's names by ${words}` : `Store ${words}`}
+        {bad > 0 ? `, leave ${bad} out` : ""}
+      </Button>
+      {bad > 0 && (
+        <Button variant="default" onClick={onRejected}>
+          Save rejected rows as CSV
+        </Button>
+      )}
+      {bad > 0 && (
+        <Text size="sm">
+          {bad} {bad === 1 ? "row does" : "rows do"} not fit: mend below the column, or leave out.
+        </Text>
+      )}
+    </>
+  );
+}

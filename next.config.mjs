@@ -1,0 +1,12 @@
+/** @type {import("next").NextConfig} */
+export default {
+  serverExternalPackages: [
+    "@electric-sql/pglite",
+    "pg",
+    "pg-boss",
+    "pglite-prisma-adapter",
+    "@prisma/adapter-pg",
+    "piscina",
+  ],
+  poweredByHeader: false,
+};
