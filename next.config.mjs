@@ -7,6 +7,7 @@ export default {
     "pglite-prisma-adapter",
     "@prisma/adapter-pg",
     "piscina",
+    "esbuild",
   ],
   poweredByHeader: false,
 };
