@@ -1,8 +1,8 @@
 import { randomUUID } from "node:crypto";
-import { notFound, staleVersion } from "../platform/errors";
+import { notFound, Refusal, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
 import { mayEdit, need } from "../workspaces/policy";
-import { checkMarket } from "./check";
+import { marketProblems } from "./check";
 import { archiveInput, copyInput, createInput, type MarketContent, saveInput } from "./schema";
 
 const create = defineCommand({
@@ -96,6 +96,12 @@ async function makeMarket(
   });
   await emit({ workspaceId, kind: "market.created", payload: { marketId: id } });
   return id;
+}
+
+/** @throws Refusal with every problem at once. */
+function checkMarket(pricingDate: string, content: MarketContent): void {
+  const problems = marketProblems(pricingDate, content);
+  if (problems.length > 0) throw new Refusal("invalid", problems);
 }
 
 async function asEditor(context: QueryContext, workspaceId: string): Promise<void> {

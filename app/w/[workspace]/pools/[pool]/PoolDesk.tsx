@@ -56,7 +56,8 @@ export function PoolDesk({ workspaceId, pool }: { workspaceId: string; pool: Ope
   const columns = useMemo(() => gridColumns(base.names, base.currency, further), [base, further]);
   const rows = useMemo(() => applyDraft(base.names, columns, draft), [base, columns, draft]);
   const names = useMemo(() => rows.flatMap((row) => (row.name ? [row.name] : [])), [rows]);
-  const settledNames = useDeferredValue(names);
+  const shown = useMemo(() => rows.flatMap((row) => row.name ?? row.saved ?? []), [rows]);
+  const settledNames = useDeferredValue(shown);
   const wrong = rows.flatMap((row) => row.problems);
   const isDirty = !isEmpty(draft) || name !== base.name;
   const isBehind = kept !== null && draft.version !== base.version;

@@ -20,7 +20,7 @@ export function SharesChart({
   const data = shares.map(({ label, share, names }) => ({
     label,
     percent: Number(allDigits(share, "percent")),
-    text: `${fourDigits(share, "percent")} %${by === "sector" ? ` · ${names}` : ""}`,
+    text: `${fourDigits(share, "percent")}\u00a0%${by === "sector" ? `\u00a0·\u00a0${names}` : ""}`,
   }));
   return (
     <div>
@@ -30,7 +30,7 @@ export function SharesChart({
           height={data.length * BAR_HEIGHT + 10}
           initialDimension={{ width: 600, height: data.length * BAR_HEIGHT + 10 }}
         >
-          <BarChart data={data} layout="vertical" margin={{ left: 0, right: 96, top: 0, bottom: 0 }}>
+          <BarChart data={data} layout="vertical" margin={{ left: 0, right: 120, top: 0, bottom: 0 }}>
             <XAxis type="number" hide domain={[0, "dataMax"]} />
             <YAxis
               type="category"
@@ -53,6 +53,11 @@ export function SharesChart({
           </BarChart>
         </ResponsiveContainer>
       </div>
+      {by === "sector" && (
+        <Text size="xs" c="dimmed">
+          Share of notional (%) · number of names.
+        </Text>
+      )}
       {others > 0 && (
         <Text size="xs" c="dimmed">
           The largest {shares.length}; {others} smaller ones not drawn.

@@ -1,0 +1,19 @@
+import { ask } from "@/app/_ui/ask";
+import { queries } from "@/lib/markets/queries";
+import { MarketDesk } from "../_desk/MarketDesk";
+
+export const metadata = { title: "Market" };
+
+export default async function Page({ params }: { params: Promise<{ workspace: string; market: string }> }) {
+  const { workspace, market: marketId } = await params;
+  const market = await ask(queries.open, { workspaceId: workspace, marketId });
+  return (
+    <MarketDesk
+      key={`${market.id} ${market.version}`}
+      workspaceId={workspace}
+      market={market}
+      today={market.pricingDate}
+      mayEdit={market.may.edit && !market.isArchived}
+    />
+  );
+}
