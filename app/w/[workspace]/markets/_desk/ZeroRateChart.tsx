@@ -32,7 +32,10 @@ export function ZeroRateChart({ points }: { points: readonly DiscountPoint[] }) 
           />
           <YAxis
             width={56}
-            domain={["auto", "auto"]}
+            domain={[
+              (least: number) => Math.floor(4 * least - 0.5) / 4,
+              (most: number) => Math.ceil(4 * most + 0.5) / 4,
+            ]}
             tick={{ fontSize: 12, fill: "currentColor" }}
             tickFormatter={(value: number) => fourDigits(value)}
             label={{
