@@ -36,14 +36,16 @@ export interface CommandContext extends QueryContext {
   emit(event: EventRecord): Promise<void>;
 }
 
-/** A public operation runs for anyone; `actor` is null when nobody is signed in. */
-export type PublicContext = Omit<CommandContext, "actor"> & { readonly actor: Actor | null };
+/** Runs a query for the same person before a command's transaction starts. */
+export type Ask = <Input, Output>(query: Query<string, Input, Output>, input: Input) => Promise<Output>;
 
-export interface Command<Name extends string = string, Input = never, Output = unknown> {
+export interface Command<Name extends string = string, Input = never, Output = unknown, Prepared = never> {
   readonly kind: "command";
   readonly name: Name;
   readonly input: z.ZodType<Input>;
-  run(context: CommandContext, input: Input): Promise<Output>;
+  /** Slow work (pricing) that must not hold a transaction; its result is handed to `run`, which checks all rights again. */
+  prepare?(input: Input, ask: Ask, actor: Actor): Promise<Prepared>;
+  run(context: CommandContext, input: Input, prepared: Prepared): Promise<Output>;
 }
 
 export interface Query<Name extends string = string, Input = never, Output = unknown> {
@@ -54,9 +56,9 @@ export interface Query<Name extends string = string, Input = never, Output = unk
 }
 
 /** Declares a command: one verb that changes something. `name` is `<concept>.<verb>`. */
-export function defineCommand<const Name extends string, Input, Output>(
-  definition: Omit<Command<Name, Input, Output>, "kind">,
-): Command<Name, Input, Output> {
+export function defineCommand<const Name extends string, Input, Output, Prepared = undefined>(
+  definition: Omit<Command<Name, Input, Output, Prepared>, "kind">,
+): Command<Name, Input, Output, Prepared> {
   return { kind: "command", ...definition };
 }
 

@@ -5,10 +5,11 @@ import { type Membership, roles } from "./accounts/actor";
 import type { Database, Transaction } from "./db/client";
 import { notFound, type Problem, Refusal, refuse } from "./errors";
 import { CHANNEL } from "./events/channel";
-import type { Command, CommandContext, Query } from "./operation";
+import type { Ask, Command, CommandContext, Query } from "./operation";
 
 /** Any registered operation, whatever its input and output. */
-export type AnyOperation = Command<string, never, unknown> | Query<string, never, unknown>;
+// biome-ignore lint/suspicious/noExplicitAny: a registry holds operations of every type
+export type AnyOperation = Command<string, any, unknown, any> | Query<string, any, unknown>;
 
 /** On whose behalf, on what, and when. */
 export interface Caller {
@@ -24,8 +25,8 @@ const ATTEMPTS = 4;
  * lost a race with another is tried again.
  * @throws Refusal with data for every expected reason.
  */
-export async function execute<Input, Output>(
-  operation: Command<string, Input, Output> | Query<string, Input, Output>,
+export async function execute<Input, Output, Prepared>(
+  operation: Command<string, Input, Output, Prepared> | Query<string, Input, Output>,
   raw: unknown,
   caller: Caller,
 ): Promise<Output> {
@@ -33,11 +34,17 @@ export async function execute<Input, Output>(
   if (!actor) throw refuse("signedOut", "signedOut", "Sign in first.");
   const parsed = operation.input.safeParse(raw);
   if (!parsed.success) throw new Refusal("invalid", inputProblems(parsed.error));
+  const input = parsed.data;
+  const ask: Ask = (query, asked) => execute(query, asked, caller);
+  const prepared = operation.kind === "command" ? await operation.prepare?.(input, ask, actor) : undefined;
   for (let attempt = 1; ; attempt++) {
     try {
-      return await database.$transaction((tx) =>
-        operation.run(contextOf(tx, actor, caller.now ?? new Date()), parsed.data),
-      );
+      return await database.$transaction((tx) => {
+        const context = contextOf(tx, actor, caller.now ?? new Date());
+        return operation.kind === "command"
+          ? operation.run(context, input, prepared as Prepared)
+          : operation.run(context, input);
+      });
     } catch (error) {
       if (attempt >= ATTEMPTS || !isLostRace(error)) throw error;
     }

@@ -4,8 +4,8 @@ import type { Command, Query } from "./operation";
 import { execute } from "./run";
 
 /** Runs one operation for whoever the request's cookies say is signed in. @throws Refusal */
-export async function serve<Input, Output>(
-  operation: Command<string, Input, Output> | Query<string, Input, Output>,
+export async function serve<Input, Output, Prepared>(
+  operation: Command<string, Input, Output, Prepared> | Query<string, Input, Output>,
   raw: unknown,
   headers: Headers,
 ): Promise<Output> {

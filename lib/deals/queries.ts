@@ -1,0 +1,166 @@
+import { marketIn } from "../markets/commands";
+import type { MarketContent } from "../markets/schema";
+import { defineQuery, type QueryContext } from "../platform/operation";
+import { poolIn } from "../pools/commands";
+import { namesOf } from "../pools/names";
+import { mayOf } from "../workspaces/policy";
+import { inWorkspace } from "../workspaces/schema";
+import { dealIn } from "./commands";
+import { toRequest } from "./request";
+import { type DealContent, dealInput } from "./schema";
+
+const list = defineQuery({
+  name: "deals.list",
+  input: inWorkspace,
+  async run({ tx, member }, { workspaceId }) {
+    const may = mayOf(await member(workspaceId));
+    const deals = await tx.deal.findMany({
+      where: { workspaceId },
+      orderBy: { updatedAt: "desc" },
+      include: {
+        pool: { select: { name: true, currency: true } },
+        market: { select: { name: true } },
+        runs: {
+          orderBy: { number: "desc" },
+          take: 1,
+          select: { number: true, createdAt: true, dealVersion: true },
+        },
+      },
+    });
+    return {
+      may,
+      deals: deals.map(({ id, name, pool, market, content, version, archivedAt, updatedAt, runs }) => ({
+        id,
+        name,
+        pool: pool.name,
+        currency: pool.currency,
+        market: market.name,
+        classes: (content as DealContent).classes.length,
+        version,
+        isArchived: archivedAt !== null,
+        updatedAt: updatedAt.toISOString(),
+        lastRun: runs[0]
+          ? {
+              number: runs[0].number,
+              at: runs[0].createdAt.toISOString(),
+              isCurrent: runs[0].dealVersion === version,
+            }
+          : null,
+      })),
+    };
+  },
+});
+
+const open = defineQuery({
+  name: "deals.open",
+  input: dealInput,
+  async run(context, { workspaceId, dealId }) {
+    const { tx } = context;
+    const may = mayOf(await context.member(workspaceId));
+    const deal = await dealIn(context, workspaceId, dealId);
+    const pool = await poolIn(context, workspaceId, deal.poolId);
+    const market = await marketIn(context, workspaceId, deal.marketId);
+    const pools = await tx.pool.findMany({
+      where: { workspaceId },
+      select: { id: true, name: true, archivedAt: true },
+      orderBy: { name: "asc" },
+    });
+    const markets = await tx.market.findMany({
+      where: { workspaceId },
+      select: { id: true, name: true, pricingDate: true, content: true, archivedAt: true },
+      orderBy: { name: "asc" },
+    });
+    const sums = await tx.poolName.aggregate({
+      where: { poolId: pool.id },
+      _sum: { notional: true },
+      _count: true,
+    });
+    return {
+      may,
+      id: deal.id,
+      name: deal.name,
+      version: deal.version,
+      isArchived: deal.archivedAt !== null,
+      content: deal.content as DealContent,
+      pool: {
+        id: pool.id,
+        name: pool.name,
+        currency: pool.currency,
+        names: sums._count,
+        notional: sums._sum.notional ?? 0,
+        version: pool.version,
+      },
+      market: {
+        id: market.id,
+        name: market.name,
+        pricingDate: market.pricingDate,
+        content: market.content as MarketContent,
+        version: market.version,
+      },
+      pools: pools
+        .filter((row) => row.archivedAt === null || row.id === pool.id)
+        .map(({ id, name }) => ({ id, name })),
+      markets: markets
+        .filter((row) => row.archivedAt === null || row.id === market.id)
+        .map(({ id, name, pricingDate, content }) => ({
+          id,
+          name,
+          pricingDate,
+          scheduleKind: (content as MarketContent).schedule.kind,
+        })),
+    };
+  },
+});
+
+const history = defineQuery({
+  name: "deals.history",
+  input: dealInput,
+  async run(context, { workspaceId, dealId }) {
+    await context.member(workspaceId);
+    await dealIn(context, workspaceId, dealId);
+    const versions = await context.tx.dealVersion.findMany({
+      where: { dealId },
+      orderBy: { version: "desc" },
+    });
+    const people = await context.tx.user.findMany({
+      where: { id: { in: versions.map((row) => row.savedById) } },
+      select: { id: true, name: true },
+    });
+    const names = new Map(people.map((person) => [person.id, person.name]));
+    return {
+      versions: versions.map(({ version, savedById, savedAt, content }) => ({
+        version,
+        savedBy: names.get(savedById) ?? "a former member",
+        savedAt: savedAt.toISOString(),
+        content,
+      })),
+    };
+  },
+});
+
+/** The request that pricing the deal now would make. */
+const request = defineQuery({
+  name: "deals.request",
+  input: dealInput,
+  async run(context, { workspaceId, dealId }) {
+    await context.member(workspaceId);
+    return requestOfDeal(context, workspaceId, dealId);
+  },
+});
+
+export async function requestOfDeal(context: QueryContext, workspaceId: string, dealId: string) {
+  const deal = await dealIn(context, workspaceId, dealId);
+  const pool = await poolIn(context, workspaceId, deal.poolId);
+  const market = await marketIn(context, workspaceId, deal.marketId);
+  const names = await namesOf(context.tx, deal.poolId);
+  const parts = {
+    content: deal.content as DealContent,
+    currency: pool.currency,
+    names,
+    pricingDate: market.pricingDate,
+    market: market.content as MarketContent,
+  };
+  return { request: toRequest(parts), version: deal.version };
+}
+
+export const queries = { list, open, history, request };

@@ -1,0 +1,62 @@
+import { dealIn } from "../deals/commands";
+import { dealInput } from "../deals/schema";
+import { notFound } from "../platform/errors";
+import { defineQuery } from "../platform/operation";
+import { runInput } from "./schema";
+import { unpackedReport, unpackedRequest } from "./stored";
+
+const list = defineQuery({
+  name: "runs.list",
+  input: dealInput,
+  async run(context, { workspaceId, dealId }) {
+    await context.member(workspaceId);
+    const deal = await dealIn(context, workspaceId, dealId);
+    const runs = await context.tx.run.findMany({
+      where: { dealId },
+      orderBy: { number: "desc" },
+      omit: { request: true, report: true },
+    });
+    const people = await context.tx.user.findMany({
+      where: { id: { in: runs.map((run) => run.createdById) } },
+      select: { id: true, name: true },
+    });
+    const names = new Map(people.map((person) => [person.id, person.name]));
+    return {
+      runs: runs.map((run) => ({
+        id: run.id,
+        number: run.number,
+        dealVersion: run.dealVersion,
+        isCurrent: run.dealVersion === deal.version,
+        requestHash: run.requestHash,
+        engine: run.engine,
+        note: run.note,
+        milliseconds: run.milliseconds,
+        by: names.get(run.createdById) ?? "a former member",
+        at: run.createdAt.toISOString(),
+      })),
+    };
+  },
+});
+
+const open = defineQuery({
+  name: "runs.open",
+  input: runInput,
+  async run({ tx, member }, { workspaceId, runId }) {
+    await member(workspaceId);
+    const run = await tx.run.findFirst({ where: { id: runId, workspaceId } });
+    if (!run) throw notFound("run");
+    return {
+      id: run.id,
+      number: run.number,
+      dealVersion: run.dealVersion,
+      requestHash: run.requestHash,
+      engine: run.engine,
+      note: run.note,
+      at: run.createdAt.toISOString(),
+      request: unpackedRequest(run.request),
+      report: unpackedReport(run.report),
+    };
+  },
+});
+
+export const queries = { list, open };
