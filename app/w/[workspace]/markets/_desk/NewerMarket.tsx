@@ -63,6 +63,8 @@ export function NewerMarket({
 }
 
 function textOf(form: MarketForm, field: keyof MarketForm): string {
+  const isFlat = form.discountKind === "flat";
+  if ((field === "nodes" && isFlat) || (field === "rate" && !isFlat)) return "";
   if (field === "nodes") return form.nodes.map(({ years, rate }) => `${years}: ${rate}`).join(", ");
   return form[field].replace(/\s+/g, " ");
 }

@@ -35,7 +35,7 @@ export function ScheduleFields({ form, problems, isReadOnly, onChange }: FieldsP
         ) : (
           <Textarea
             label="Holidays"
-            description="Dates YYYY-MM-DD; Saturdays and Sundays are none"
+            description="Dates YYYY-MM-DD, one a line; weekends need not be listed"
             autosize
             minRows={3}
             maxRows={10}

@@ -41,7 +41,9 @@ export function ZeroRateChart({ points }: { points: readonly DiscountPoint[] }) 
             label={{
               value: "zero rate (%)",
               angle: -90,
-              position: "insideLeft",
+              position: "left",
+              offset: -12,
+              style: { textAnchor: "middle" },
               fontSize: 12,
               fill: "currentColor",
             }}
