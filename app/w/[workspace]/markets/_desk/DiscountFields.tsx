@@ -98,7 +98,7 @@ function Nodes({ form, problems, isReadOnly, onChange }: FieldsProps) {
         </Table.Tbody>
       </Table>
       {problems[`${path}.nodes`] && (
-        <Text size="sm" c="red">
+        <Text size="sm" c="var(--mantine-color-error)">
           {problems[`${path}.nodes`]}
         </Text>
       )}

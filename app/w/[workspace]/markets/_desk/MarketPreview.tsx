@@ -50,7 +50,8 @@ export function MarketPreview({ reading }: { reading: FormReading }) {
             ))}
           </Table.Tbody>
         </Table>
-        <Table.ScrollContainer minWidth={0} maxHeight={300}>
+        {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reachable by keyboard */}
+        <section aria-label="Payments, scrollable" tabIndex={0} style={{ maxHeight: 300, overflow: "auto" }}>
           <Table verticalSpacing={2} aria-label="Payments" style={{ fontVariantNumeric: "tabular-nums" }}>
             <Table.Thead>
               <Table.Tr>
@@ -69,7 +70,7 @@ export function MarketPreview({ reading }: { reading: FormReading }) {
               ))}
             </Table.Tbody>
           </Table>
-        </Table.ScrollContainer>
+        </section>
       </SimpleGrid>
       <Text size="xs" c="dimmed">
         Payments of a contract that ends in {SHOWN_MATURITY} years' time.

@@ -15,7 +15,7 @@ export function ZeroRateChart({ points }: { points: readonly DiscountPoint[] }) 
   return (
     <div aria-hidden>
       <ResponsiveContainer width="100%" height={HEIGHT} initialDimension={{ width: 480, height: HEIGHT }}>
-        <LineChart data={data} margin={{ left: 0, right: 12, top: 8, bottom: 16 }}>
+        <LineChart data={data} accessibilityLayer={false} margin={{ left: 0, right: 12, top: 8, bottom: 16 }}>
           <CartesianGrid strokeOpacity={0.25} />
           <XAxis
             dataKey="years"

@@ -157,7 +157,7 @@ export function PoolDesk({ workspaceId, pool }: { workspaceId: string; pool: Ope
           <Button variant="default" disabled={!isDirty} onClick={() => setKept(null)}>
             Undo all changes
           </Button>
-          <Text size="sm" aria-live="polite" c={wrong.length > 0 ? "red" : "dimmed"}>
+          <Text size="sm" aria-live="polite" c={wrong.length > 0 ? "var(--mantine-color-error)" : "dimmed"}>
             {statusWords(isDirty, wrong)}
           </Text>
         </Group>

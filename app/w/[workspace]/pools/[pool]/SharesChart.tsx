@@ -30,7 +30,12 @@ export function SharesChart({
           height={data.length * BAR_HEIGHT + 10}
           initialDimension={{ width: 600, height: data.length * BAR_HEIGHT + 10 }}
         >
-          <BarChart data={data} layout="vertical" margin={{ left: 0, right: 120, top: 0, bottom: 0 }}>
+          <BarChart
+            data={data}
+            accessibilityLayer={false}
+            layout="vertical"
+            margin={{ left: 0, right: 120, top: 0, bottom: 0 }}
+          >
             <XAxis type="number" hide domain={[0, "dataMax"]} />
             <YAxis
               type="category"

@@ -57,7 +57,7 @@ export function NamesGrid({
     getColumnCanGlobalFilter: (column) => /^(id|name|sector|status)$/.test(column.id),
   });
   const shown = table.getRowModel().rows;
-  const scroller = useRef<HTMLDivElement>(null);
+  const scroller = useRef<HTMLElement>(null);
   const virtual = useVirtualizer({
     count: shown.length,
     getScrollElement: () => scroller.current,
@@ -69,7 +69,8 @@ export function NamesGrid({
   const below = virtual.getTotalSize() - (items.at(-1)?.end ?? 0);
 
   return (
-    <div className={styles.scroller} ref={scroller}>
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reachable by keyboard
+    <section className={styles.scroller} ref={scroller} aria-label="Names, scrollable" tabIndex={0}>
       <table className={styles.grid} aria-label="Names" aria-rowcount={shown.length + 1}>
         <thead>
           <tr>
@@ -101,7 +102,7 @@ export function NamesGrid({
           {below > 0 && <tr aria-hidden style={{ height: below }} />}
         </tbody>
       </table>
-    </div>
+    </section>
   );
 }
 

@@ -109,7 +109,7 @@ function ColumnChoice({
       <Table.Td>
         {label}
         {remark && (
-          <Text size="xs" c="orange.8">
+          <Text size="xs" c="var(--remark-color)">
             {remark}
           </Text>
         )}

@@ -172,7 +172,7 @@ function TakeButtons({
         onClick={onTake}
         loading={isBusy}
         disabled={reading.tableProblems.length > 0 || count === 0}
-        {...(isWhole ? {} : { color: "orange" })}
+        {...(isWhole ? {} : { color: "orange.9" })}
       >
         {replaces ? `Replace the pool's names by ${words}` : `Store ${words}`}
         {bad > 0 ? `, leave ${bad} out` : ""}

@@ -30,7 +30,7 @@ export function ImportPreview({
         {titleLines > 0 && ` ${titleLines} ${titleLines === 1 ? "line" : "lines"} above the header left out.`}
       </Text>
       {setAside.map(({ line, cells, remark }) => (
-        <Text key={line} size="sm" c={remark ? "orange.8" : "inherit"}>
+        <Text key={line} size="sm" c={remark ? "var(--remark-color)" : "inherit"}>
           Line {line} set aside as no name: {cells.filter((cell) => cell !== "").join(" · ")}
           {remark && `. ${remark}`}
         </Text>
@@ -150,8 +150,12 @@ function FirstRow({ row, width }: { row: ImportedRow; width: number }) {
     <Table.Tr>
       <Table.Td>{row.line}</Table.Td>
       {Array.from({ length: width }, (_, i) => (
-        // biome-ignore lint/suspicious/noArrayIndexKey: a cell is its position in the row
-        <Table.Td key={i} title={reasons.get(i) ?? ""} c={reasons.has(i) ? "red" : "inherit"}>
+        <Table.Td
+          // biome-ignore lint/suspicious/noArrayIndexKey: a cell is its position in the row
+          key={i}
+          title={reasons.get(i) ?? ""}
+          c={reasons.has(i) ? "var(--mantine-color-error)" : "inherit"}
+        >
           {reasons.has(i) ? `⚠ ${row.cells[i] ?? ""}` : row.cells[i]}
         </Table.Td>
       ))}
