@@ -1,6 +1,8 @@
-import { Container } from "@mantine/core";
-import Link from "next/link";
+import { Container, Text } from "@mantine/core";
 import type { ReactNode } from "react";
+import { ask } from "@/app/_ui/ask";
+import { queries } from "@/lib/workspaces/queries";
+import { WorkspaceBar } from "./WorkspaceBar";
 
 /** The frame of every screen of a workspace. */
 export default async function WorkspaceLayout({
@@ -11,13 +13,18 @@ export default async function WorkspaceLayout({
   params: Promise<{ workspace: string }>;
 }) {
   const { workspace } = await params;
+  const { name, role, actor } = await ask(queries.open, { workspaceId: workspace });
   return (
-    <Container size="xl" py="md" component="main">
-      <nav aria-label="Workspace">
-        <Link href={`/w/${workspace}/pools`}>Pools</Link>{" "}
-        <Link href={`/w/${workspace}/markets`}>Markets</Link>
-      </nav>
-      {children}
-    </Container>
+    <>
+      <WorkspaceBar workspaceId={workspace} name={name} role={role} person={actor.name} />
+      <Container size="xl" py="md" component="main">
+        {children}
+        <Text component="footer" size="xs" c="dimmed" mt="xl">
+          Figures come from a model whose copula has no dynamics and which the market has broken before. They
+          are an aid to judgement, not advice or a price anyone must honour; use is subject to the firm's own
+          model validation, to local regulation, and to licensed practice.
+        </Text>
+      </Container>
+    </>
   );
 }
