@@ -11,7 +11,7 @@ export interface DealParts {
   readonly market: MarketContent;
 }
 
-const INCLUDED: Extra[] = ["lossLaw", "timeline", "impliedCorrelation"];
+const INCLUDED: Extra[] = ["lossLaw", "timeline"];
 
 /** The pricing request of a deal; what does not fit together is for the request's own checks to say. */
 export function toRequest({ content, currency, names, pricingDate, market }: DealParts): PricingRequest {
@@ -19,9 +19,6 @@ export function toRequest({ content, currency, names, pricingDate, market }: Dea
     market.schedule.kind === "even"
       ? { kind: "even" as const, years: content.years ?? 0, perYear: market.schedule.perYear }
       : { kind: "standard" as const, maturity: content.maturity ?? "", holidays: market.schedule.holidays };
-  const include = INCLUDED.filter(
-    (extra) => extra !== "impliedCorrelation" || content.classes.some(isQuoted),
-  );
   return {
     format: 1,
     currency,
@@ -33,16 +30,6 @@ export function toRequest({ content, currency, names, pricingDate, market }: Dea
     law: { kind: content.law },
     tranches: content.classes.map(({ name: _name, ...tranche }) => tranche),
     ...(content.nthToDefault.length > 0 ? { nthToDefault: content.nthToDefault } : {}),
-    include,
+    include: INCLUDED,
   };
-}
-
-function isQuoted({
-  running,
-  upfront,
-}: {
-  running?: number | undefined;
-  upfront?: number | undefined;
-}): boolean {
-  return running !== undefined && upfront !== undefined;
 }
