@@ -1,7 +1,10 @@
-/** The arrows of the house: they never turn round. See DEVELOPERS.md. */
+/**
+ * The arrows of the house: they never turn round. See DEVELOPERS.md. @swc/core is installed so that TypeScript files are read
+ * at all (TypeScript 7 has no interface for it): without it nothing is checked and nothing complains.
+ */
 module.exports = {
   forbidden: [
-    { name: "no-cycles", severity: "error", from: {}, to: { circular: true } },
+    { name: "no-cycles", severity: "error", from: { pathNot: "^lib/generated/" }, to: { circular: true } },
     {
       name: "quant-imports-nothing-above",
       severity: "error",
