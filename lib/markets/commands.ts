@@ -1,5 +1,5 @@
 import { randomUUID } from "node:crypto";
-import { notFound, Refusal, staleVersion } from "../platform/errors";
+import { notFound, Refusal, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
 import { mayEdit, need } from "../workspaces/policy";
 import { marketProblems } from "./check";
@@ -31,6 +31,8 @@ const save = defineCommand({
         content: savedContent,
       });
     }
+    if (before.archivedAt)
+      throw refuse("conflict", "archived", "This market is archived: restore it, then save.");
     checkMarket(pricingDate, content);
     await tx.market.update({
       where: { id: marketId },

@@ -1,5 +1,5 @@
 import { randomUUID } from "node:crypto";
-import { notFound, staleVersion } from "../platform/errors";
+import { notFound, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
 import { mayEdit, need } from "../workspaces/policy";
 import { checkedNames, namesOf, writeNames } from "./names";
@@ -31,6 +31,8 @@ const save = defineCommand({
         names: before,
       });
     }
+    if (pool.archivedAt)
+      throw refuse("conflict", "archived", "This pool is archived: restore it, then save.");
     const names = checkedNames(raw);
     const change = await writeNames(tx, poolId, before, names);
     await tx.pool.update({ where: { id: poolId }, data: { name, currency, version: version + 1 } });

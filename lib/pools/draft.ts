@@ -1,7 +1,7 @@
 import type { NameInput } from "../pricing/request";
-import { cellText, type GridColumn, valueIn } from "./grid";
+import { type CreditColumn, cellText, type GridColumn, valueIn } from "./grid";
 import type { ImportProblem } from "./import/cells";
-import { textFields } from "./import/columns";
+import { columnFields, textFields } from "./import/columns";
 import { readNumber } from "./import/numbers";
 import { readRow } from "./import/row";
 
@@ -33,6 +33,32 @@ export function emptyDraft(version: number): PoolDraft {
 
 export function isEmpty({ typed, added, removed }: PoolDraft): boolean {
   return Object.keys(typed).length + added.length + removed.length === 0;
+}
+
+/** One cell as typed. */
+export interface TypedCell {
+  readonly row: Pick<DraftRow, "key" | "saved">;
+  readonly column: GridColumn;
+  readonly text: string;
+}
+
+/** Credit columns that something was typed into: they are shown even where no saved name uses them. */
+export function typedColumns({ typed }: PoolDraft): CreditColumn[] {
+  const keys = new Set(Object.values(typed).flatMap((cells) => Object.keys(cells)));
+  return [...keys].flatMap((key) => {
+    const [name, years] = key.split(" ");
+    const field = columnFields.find((known) => known === name);
+    const isCredit = field && !["id", "name", "sector", "notional", "recovery", "loading"].includes(field);
+    return isCredit ? [{ field, years: years ? Number(years) : null }] : [];
+  });
+}
+
+/** The draft with cells typed, one or a pasted block. */
+export function withTypedCells(draft: PoolDraft, cells: readonly TypedCell[]): PoolDraft {
+  return cells.reduce(
+    (laid, { row, column, text }) => withTyped(laid, row.key, column, text, row.saved),
+    draft,
+  );
 }
 
 /** The draft with one cell typed; typing what is saved there takes the cell out of the draft again. */

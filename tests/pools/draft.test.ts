@@ -1,6 +1,15 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { applyDraft, emptyDraft, isEmpty, withAdded, withRemoved, withTyped } from "@/lib/pools/draft";
+import {
+  applyDraft,
+  emptyDraft,
+  isEmpty,
+  typedColumns,
+  withAdded,
+  withRemoved,
+  withTyped,
+  withTypedCells,
+} from "@/lib/pools/draft";
 import { cellText, gridColumns, valueIn } from "@/lib/pools/grid";
 import { digitsIn, inUnit } from "@/lib/pools/import/numbers";
 import type { NameInput } from "@/lib/pricing/request";
@@ -76,6 +85,24 @@ describe("a draft laid over saved names", () => {
   it("refuses an id that another row has", () => {
     const draft = withTyped(emptyDraft(1), "b", column("id"), "a", names[1]!);
     expect(applyDraft(names, columns, draft)[1]?.problems[0]?.reason).toBe("is already the id of line 1");
+  });
+
+  it("shows the columns something was typed into, though no saved name uses them", () => {
+    const further = gridColumns(names, "EUR", [{ field: "cumulative", years: 3 }]);
+    const typed = further.find(({ key }) => key === "cumulative 3")!;
+    const draft = withTyped(emptyDraft(1), "a", typed, "1", names[0]!);
+    expect(typedColumns(draft)).toEqual([{ field: "cumulative", years: 3 }]);
+    expect(typedColumns(withTyped(emptyDraft(1), "a", column("recovery"), "1", names[0]!))).toEqual([]);
+  });
+
+  it("takes a pasted block cell by cell", () => {
+    const block = ["11", "30"].map((text, i) => ({
+      row: { key: names[i]!.id, saved: names[i]! },
+      column: column("notional"),
+      text,
+    }));
+    const rows = applyDraft(names, columns, withTypedCells(emptyDraft(1), block));
+    expect(rows.map(({ name }) => name?.notional)).toEqual([11, 30]);
   });
 
   it("adds and removes rows", () => {

@@ -2,11 +2,11 @@ import { describe, expect, it } from "vitest";
 import { commands } from "@/lib/markets/commands";
 import { queries } from "@/lib/markets/queries";
 import type { Actor } from "@/lib/platform/accounts/actor";
-import { Refusal } from "@/lib/platform/errors";
 import { execute } from "@/lib/platform/run";
 import { aPerson, aWorkspace } from "../support/actors";
 import { aMarket } from "../support/builders";
 import { withDatabase } from "../support/database";
+import { refusal } from "../support/refusal";
 
 const place = withDatabase();
 const as = (actor: Actor) => ({ database: place.store.database, actor });
@@ -16,15 +16,6 @@ async function setUp() {
   const by = as(members.structurer);
   const { marketId } = await execute(commands.create, { workspaceId, ...aMarket() }, by);
   return { workspaceId, members, by, marketId };
-}
-
-async function refusal(act: Promise<unknown>): Promise<Refusal> {
-  const error = await act.then(
-    () => null,
-    (reason: unknown) => reason,
-  );
-  if (error instanceof Refusal) return error;
-  throw new Error(`expected a refusal, got ${String(error)}`);
 }
 
 describe("markets", () => {
@@ -93,6 +84,13 @@ describe("markets", () => {
     ]);
     await execute(commands.archive, { workspaceId, marketId, archived: false }, by);
     expect((await execute(queries.open, { workspaceId, marketId }, by)).isArchived).toBe(false);
+  });
+
+  it("are not saved while archived", async () => {
+    const { workspaceId, marketId, by } = await setUp();
+    await execute(commands.archive, { workspaceId, marketId, archived: true }, by);
+    const saved = execute(commands.save, { workspaceId, marketId, version: 1, ...aMarket() }, by);
+    expect((await refusal(saved)).problems[0]?.code).toBe("archived");
   });
 
   it("are changed by owner and structurer, read by analyst and viewer, unknown to strangers", async () => {

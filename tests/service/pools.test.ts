@@ -1,12 +1,12 @@
 import { describe, expect, it } from "vitest";
 import type { Actor } from "@/lib/platform/accounts/actor";
-import { Refusal } from "@/lib/platform/errors";
 import { execute } from "@/lib/platform/run";
 import { commands } from "@/lib/pools/commands";
 import { queries } from "@/lib/pools/queries";
 import { aPerson, aWorkspace } from "../support/actors";
 import { aName, aPool } from "../support/builders";
 import { withDatabase } from "../support/database";
+import { refusal } from "../support/refusal";
 
 const place = withDatabase();
 const as = (actor: Actor) => ({ database: place.store.database, actor });
@@ -18,15 +18,6 @@ async function setUp() {
   const { poolId } = await execute(commands.create, { workspaceId, ...pool }, by);
   const open = () => execute(queries.open, { workspaceId, poolId }, by);
   return { workspaceId, members, by, pool, poolId, open };
-}
-
-async function refusal(act: Promise<unknown>): Promise<Refusal> {
-  const error = await act.then(
-    () => null,
-    (reason: unknown) => reason,
-  );
-  if (error instanceof Refusal) return error;
-  throw new Error(`expected a refusal, got ${String(error)}`);
 }
 
 describe("pools", () => {
@@ -110,6 +101,13 @@ describe("pools", () => {
     expect(await isArchived()).toBe(true);
     await execute(commands.archive, { workspaceId, poolId, archived: false }, by);
     expect(await isArchived()).toBe(false);
+  });
+
+  it("are not saved while archived", async () => {
+    const { by, workspaceId, poolId } = await setUp();
+    await execute(commands.archive, { workspaceId, poolId, archived: true }, by);
+    const saved = execute(commands.save, { workspaceId, poolId, version: 1, ...aPool(1) }, by);
+    expect((await refusal(saved)).problems[0]?.code).toBe("archived");
   });
 
   it("are listed with their names counted and their notional summed", async () => {

@@ -6,6 +6,7 @@ import { useRouter } from "next/navigation";
 import { useDeferredValue, useMemo, useState } from "react";
 import { call } from "@/app/_ui/call";
 import { Problems } from "@/app/_ui/Problems";
+import { UndoButton } from "@/app/_ui/UndoButton";
 import { useKept } from "@/app/_ui/useKept";
 import { blankForm, formOf, type MarketForm, readForm } from "@/lib/markets/form";
 import type { Operations } from "@/lib/operations";
@@ -42,6 +43,7 @@ export function MarketDesk({
   const [kept, setKept] = useKept<Kept>(`market ${market?.id ?? `new ${workspaceId}`}`);
   const [refused, setRefused] = useState<readonly Problem[]>([]);
   const [isBusy, setBusy] = useState(false);
+  const [undone, setUndone] = useState<Kept | null>(null);
   const savedForm = useMemo(() => (saved ? formOf(saved) : blankForm(today)), [saved, today]);
   const form = kept?.form ?? savedForm;
   const settled = useDeferredValue(form);
@@ -69,7 +71,7 @@ export function MarketDesk({
       setKept(null);
       if ("marketId" in answer.output) router.push(`/w/${workspaceId}/markets/${answer.output.marketId}`);
       router.refresh();
-    } else if (answer.status === 409) setSaved(answer.current as Saved);
+    } else if (answer.current) setSaved(answer.current as Saved);
     else setRefused(answer.problems);
   };
 
@@ -108,9 +110,7 @@ export function MarketDesk({
           <Button onClick={save} loading={isBusy} disabled={!isDirty || !reading.ok || isBehind}>
             {market ? "Save" : "Store the market"}
           </Button>
-          <Button variant="default" disabled={!isDirty} onClick={() => setKept(null)}>
-            Undo all changes
-          </Button>
+          <UndoButton kept={kept} undone={undone} onKept={setKept} onUndone={setUndone} />
           <Text size="sm" c="dimmed" aria-live="polite">
             {isDirty
               ? "Not saved yet; kept in this browser until it is."

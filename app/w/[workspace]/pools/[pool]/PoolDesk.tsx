@@ -6,6 +6,7 @@ import { useRouter } from "next/navigation";
 import { useCallback, useDeferredValue, useMemo, useState } from "react";
 import { call } from "@/app/_ui/call";
 import { Problems } from "@/app/_ui/Problems";
+import { UndoButton } from "@/app/_ui/UndoButton";
 import { useKept } from "@/app/_ui/useKept";
 import type { Problem } from "@/lib/platform/errors";
 import {
@@ -14,11 +15,13 @@ import {
   emptyDraft,
   isEmpty,
   type PoolDraft,
+  type TypedCell,
+  typedColumns,
   withAdded,
   withRemoved,
-  withTyped,
+  withTypedCells,
 } from "@/lib/pools/draft";
-import { type CreditColumn, type GridColumn, gridColumns } from "@/lib/pools/grid";
+import { type CreditColumn, gridColumns } from "@/lib/pools/grid";
 import type { NameInput } from "@/lib/pricing/request";
 import { NamesGrid } from "../_grid/NamesGrid";
 import { furtherColumns } from "./furtherColumns";
@@ -49,11 +52,15 @@ export function PoolDesk({ workspaceId, pool }: { workspaceId: string; pool: Ope
   const [sought, setSought] = useState("");
   const [refused, setRefused] = useState<readonly Problem[]>([]);
   const [isBusy, setBusy] = useState(false);
+  const [undone, setUndone] = useState<Kept | null>(null);
   const draft = kept?.draft ?? emptyDraft(base.version);
   const name = kept?.name ?? base.name;
   const mayEdit = pool.may.edit && !pool.isArchived;
 
-  const columns = useMemo(() => gridColumns(base.names, base.currency, further), [base, further]);
+  const columns = useMemo(
+    () => gridColumns(base.names, base.currency, [...further, ...typedColumns(draft)]),
+    [base, further, draft],
+  );
   const rows = useMemo(() => applyDraft(base.names, columns, draft), [base, columns, draft]);
   const names = useMemo(() => rows.flatMap((row) => (row.name ? [row.name] : [])), [rows]);
   const shown = useMemo(() => rows.flatMap((row) => row.name ?? row.saved ?? []), [rows]);
@@ -69,8 +76,7 @@ export function PoolDesk({ workspaceId, pool }: { workspaceId: string; pool: Ope
   );
   const edits = useMemo(
     () => ({
-      type: (row: DraftRow, column: GridColumn, text: string) =>
-        change(withTyped(draft, row.key, column, text, row.saved)),
+      type: (cells: readonly TypedCell[]) => change(withTypedCells(draft, cells)),
       remove: (row: DraftRow) => change(withRemoved(draft, row.key)),
     }),
     [draft, change],
@@ -86,7 +92,7 @@ export function PoolDesk({ workspaceId, pool }: { workspaceId: string; pool: Ope
     if (answer.ok) {
       setKept(null);
       router.refresh();
-    } else if (answer.status === 409) setBase(answer.current as Base);
+    } else if (answer.current) setBase(answer.current as Base);
     else setRefused(answer.problems);
   };
 
@@ -154,9 +160,7 @@ export function PoolDesk({ workspaceId, pool }: { workspaceId: string; pool: Ope
           <Button onClick={save} loading={isBusy} disabled={!isDirty || wrong.length > 0 || isBehind}>
             Save
           </Button>
-          <Button variant="default" disabled={!isDirty} onClick={() => setKept(null)}>
-            Undo all changes
-          </Button>
+          <UndoButton kept={kept} undone={undone} onKept={setKept} onUndone={setUndone} />
           <Text size="sm" aria-live="polite" c={wrong.length > 0 ? "var(--mantine-color-error)" : "dimmed"}>
             {statusWords(isDirty, wrong)}
           </Text>

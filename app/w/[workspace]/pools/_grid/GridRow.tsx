@@ -2,14 +2,14 @@
 
 import { type KeyboardEvent, memo, useState } from "react";
 import { fourDigits } from "@/app/_ui/figures";
-import type { DraftRow } from "@/lib/pools/draft";
+import type { DraftRow, TypedCell } from "@/lib/pools/draft";
 import { cellText, type GridColumn, valueIn } from "@/lib/pools/grid";
 import { textFields } from "@/lib/pools/import/columns";
 import styles from "./grid.module.css";
 
 /** What a grid tells when cells are typed in or rows taken away; absent where the reader may not edit. */
 export interface GridEdits {
-  type(row: DraftRow, column: GridColumn, text: string): void;
+  type(cells: readonly TypedCell[]): void;
   remove(row: DraftRow): void;
 }
 
@@ -19,11 +19,13 @@ export const GridRow = memo(function GridRow({
   index,
   columns,
   edits,
+  onPaste,
 }: {
   row: DraftRow;
   index: number;
   columns: readonly GridColumn[];
   edits: GridEdits | null;
+  onPaste: (index: number, position: number, text: string) => boolean;
 }) {
   const reasons = new Map(row.problems.map(({ position, reason }) => [position, reason]));
   return (
@@ -36,6 +38,7 @@ export const GridRow = memo(function GridRow({
           place={`${index}:${position}`}
           reason={reasons.get(position) ?? null}
           edits={edits}
+          onPaste={(text) => onPaste(index, position, text)}
         />
       ))}
       {edits && (
@@ -60,12 +63,14 @@ function GridCell({
   place,
   reason,
   edits,
+  onPaste,
 }: {
   row: DraftRow;
   column: GridColumn;
   place: string;
   reason: string | null;
   edits: GridEdits | null;
+  onPaste: (text: string) => boolean;
 }) {
   const [isTyping, setTyping] = useState(false);
   const isText = textFields.includes(column.field);
@@ -99,8 +104,11 @@ function GridCell({
         value={isTyping ? (typed ?? full) : short}
         onFocus={() => setTyping(true)}
         onBlur={() => setTyping(false)}
-        onChange={(event) => edits.type(row, column, event.currentTarget.value)}
+        onChange={(event) => edits.type([{ row, column, text: event.currentTarget.value }])}
         onKeyDown={moveByKey}
+        onPaste={(event) => {
+          if (onPaste(event.clipboardData.getData("text/plain"))) event.preventDefault();
+        }}
       />
     </td>
   );

@@ -68,6 +68,24 @@ export function NamesGrid({
   const above = items[0]?.start ?? 0;
   const below = virtual.getTotalSize() - (items.at(-1)?.end ?? 0);
 
+  /** Lays a block of spreadsheet cells from a cell on to the right and down; a single cell is left to the field itself. */
+  const paste = (index: number, position: number, text: string): boolean => {
+    const block = text
+      .replace(/\r?\n$/, "")
+      .split(/\r?\n/)
+      .map((line) => line.split("\t"));
+    if (!edits || (block.length === 1 && block[0]?.length === 1)) return false;
+    edits.type(
+      block.flatMap((cells, i) =>
+        cells.flatMap((cell, k) => {
+          const [row, column] = [shown[index + i]?.original, columns[position + k]];
+          return row && column ? [{ row, column, text: cell.trim() }] : [];
+        }),
+      ),
+    );
+    return true;
+  };
+
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reachable by keyboard
     <section className={styles.scroller} ref={scroller} aria-label="Names, scrollable" tabIndex={0}>
@@ -97,7 +115,16 @@ export function NamesGrid({
           {above > 0 && <tr aria-hidden style={{ height: above }} />}
           {items.map(({ index }) => {
             const row = shown[index]!.original;
-            return <GridRow key={row.key} row={row} index={index} columns={columns} edits={edits} />;
+            return (
+              <GridRow
+                key={row.key}
+                row={row}
+                index={index}
+                columns={columns}
+                edits={edits}
+                onPaste={paste}
+              />
+            );
           })}
           {below > 0 && <tr aria-hidden style={{ height: below }} />}
         </tbody>

@@ -46,6 +46,7 @@ export function ImportDesk({
   const [trouble, setTrouble] = useState<string | null>(null);
   const [refused, setRefused] = useState<readonly Problem[]>([]);
   const [isBusy, setBusy] = useState(false);
+  const [version, setVersion] = useState(into?.version ?? 0);
   const settled = useDeferredValue(opened);
   const reading = useMemo(() => settled && readNames(settled.table, settled.columns), [settled]);
 
@@ -68,14 +69,17 @@ export function ImportDesk({
       ? await call("pools.save", {
           workspaceId,
           poolId: into.id,
-          version: into.version,
+          version,
           name,
           currency,
           names,
         })
       : await call("pools.create", { workspaceId, name, currency, names });
     setBusy(false);
-    if (!answer.ok) return setRefused(answer.problems);
+    if (!answer.ok) {
+      if (answer.current) setVersion((answer.current as { version: number }).version);
+      return setRefused(answer.problems);
+    }
     const poolId = into ? into.id : (answer.output as { poolId: string }).poolId;
     router.push(`/w/${workspaceId}/pools/${poolId}`);
     router.refresh();
@@ -136,7 +140,11 @@ export function ImportDesk({
             />
           </Group>
           <Problems
-            title="The pool was not stored"
+            title={
+              refused.some(({ code }) => code === "staleVersion")
+                ? "The pool was not stored: pressing again replaces the newer version"
+                : "The pool was not stored"
+            }
             problems={refused.filter(({ path }) => path !== "name" && path !== "currency")}
           />
         </>
