@@ -1,3 +1,4 @@
+import { randomUUID } from "node:crypto";
 import { readFileSync } from "node:fs";
 import type { Page } from "@playwright/test";
 import { type Desk, expect, expectAccessible, test } from "./support/desk";
@@ -156,6 +157,47 @@ test("a save over a newer version shows both and loses nothing typed", async ({ 
   expect(names).toMatchObject([{ id: "A1", notional: 5e6, recovery: 0.2 }]);
 });
 
+test("a block of cells is pasted into the grid, undone, and brought back", async ({
+  page,
+  desk,
+  context,
+}) => {
+  await context.grantPermissions(["clipboard-read", "clipboard-write"]);
+  const poolId = await aStoredPool(desk);
+  await page.goto(`/w/${desk.workspaceId}/pools/${poolId}`);
+  await page.evaluate(() => navigator.clipboard.writeText("5000000\t25\n6000000\t26"));
+  await page.getByLabel("Notional (EUR), A1").focus();
+  await page.keyboard.press("Control+V");
+  await expect(page.getByLabel("Recovery (%), A2")).toHaveValue("26");
+  await page.getByRole("button", { name: "Undo all changes" }).click();
+  await expect(page.getByLabel("Recovery (%), A2")).toHaveValue("35");
+  await page.getByRole("button", { name: "Bring the changes back" }).click();
+  await page.getByRole("button", { name: "Save" }).click();
+  await expect(page.getByText("Everything is saved.")).toBeVisible();
+  const { names } = await desk.call("pools.open", { poolId });
+  expect(names).toMatchObject([
+    { id: "A1", notional: 5e6, recovery: 0.25 },
+    { id: "A2", notional: 6e6, recovery: 0.26 },
+  ]);
+});
+
+test("ten thousand rows are read and checked within three seconds", async ({ page, desk }) => {
+  const rows = Array.from(
+    { length: 10_000 },
+    (_, i) => `N${i},Name ${i},Foods,1000000,40,${50 + (i % 300)}.5`,
+  );
+  const text = ["Id,Name,Sector,Notional,Recovery (%),Spread 5Y (bp)", ...rows].join("\n");
+  await openImport(page, desk);
+  const start = Date.now();
+  await fileField(page).setInputFiles({ name: "large.csv", mimeType: "text/csv", buffer: Buffer.from(text) });
+  await expect(page.getByText("10000 rows: 10000 fit, 0 do not.")).toBeVisible();
+  expect(Date.now() - start).toBeLessThan(3_000);
+  await page.getByRole("button", { name: "Store 10000 names" }).click();
+  const grid = page.getByRole("table", { name: "Names" });
+  await expect(grid).toHaveAttribute("aria-rowcount", "10001", { timeout: 30_000 });
+  expect(await grid.locator("tbody tr").count()).toBeLessThan(100);
+});
+
 test("a pool is copied, archived and restored", async ({ page, desk }) => {
   const poolId = await aStoredPool(desk);
   await page.goto(`/w/${desk.workspaceId}/pools/${poolId}`);
@@ -177,4 +219,28 @@ test("a narrow screen keeps the page within its width", async ({ page, desk }) =
     await expect(page.getByRole("heading", { level: 1 })).toBeVisible();
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390);
   }
+});
+
+test("someone who may only read sees the names and no way to change them", async ({
+  desk,
+  browser,
+  baseURL,
+}) => {
+  const poolId = await aStoredPool(desk);
+  const invited = await desk.call("workspaces.invite", { role: "viewer", email: "" });
+  const token = String(invited.link).split("/").pop();
+  const context = await browser.newContext({ ...(baseURL ? { baseURL } : {}) });
+  const headers = { origin: baseURL ?? "" };
+  const data = { name: "Vera Quill", email: `${randomUUID()}@example.test`, password: "a long enough one" };
+  await context.request.post("/api/accounts/sign-up/email", { data, headers });
+  const accepted = await context.request.post("/api/v1/workspaces.join", { data: { token }, headers });
+  expect(accepted.ok(), await accepted.text()).toBe(true);
+  const reader = await context.newPage();
+  await reader.goto(`/w/${desk.workspaceId}/pools/${poolId}`);
+  await expect(reader.getByRole("cell", { name: "Aldermoor" })).toBeVisible();
+  await expect(reader.getByRole("button", { name: "Save" })).toBeHidden();
+  await expect(reader.getByRole("button", { name: "Archive" })).toBeHidden();
+  await expect(reader.getByRole("table", { name: "Names" }).getByRole("textbox")).toHaveCount(0);
+  await expectAccessible(reader);
+  await context.close();
 });
