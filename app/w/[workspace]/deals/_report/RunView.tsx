@@ -1,0 +1,158 @@
+"use client";
+
+import { Alert, Button, Group, SimpleGrid, Stack, Table, Text, Title } from "@mantine/core";
+import dynamic from "next/dynamic";
+import Link from "next/link";
+import { Figure } from "@/app/_ui/Figure";
+import type { FigureUnit } from "@/app/_ui/figures";
+import { saveFile } from "@/app/_ui/saveFile";
+import type { Operations } from "@/lib/operations";
+import { Hull } from "../_desk/Hull";
+import { ClassesTable } from "./ClassesTable";
+
+const LossLawChart = dynamic(() => import("./LossLawChart").then((module) => module.LossLawChart), {
+  ssr: false,
+});
+const TimelineChart = dynamic(() => import("./TimelineChart").then((module) => module.TimelineChart), {
+  ssr: false,
+});
+
+type Run = Operations["runs.open"]["output"];
+
+/** A run as it was priced: pool, classes, loss law, expected loss over time, contracts, warnings. */
+export function RunView({
+  workspaceId,
+  deal,
+  run,
+  classNames,
+}: {
+  workspaceId: string;
+  deal: { id: string; name: string; version: number };
+  run: Run;
+  classNames: Readonly<Record<string, string>>;
+}) {
+  const { report, request } = run;
+  const nameOf = (id: string) => classNames[id] ?? id;
+  const pool: [string, number | null, FigureUnit, string][] = [
+    ["Expected loss", report.pool.expectedLoss, "percent", "% of notional"],
+    ["Defaults expected", report.pool.defaultsExpected, "plain", "names"],
+    ["Par spread", report.pool.parSpread, "basisPoints", "bp"],
+    ["Annuity", report.pool.annuity, "years", "years"],
+    ["Realised loss", report.pool.realisedLoss, "percent", "% of notional"],
+    ["Loss unit", report.pool.unit, "percent", "% of notional"],
+  ];
+  const marks = report.tranches.map((tranche) => ({
+    name: nameOf(tranche.id),
+    attachment: tranche.attachment,
+    detachment: tranche.detachment,
+  }));
+  return (
+    <Stack gap="lg">
+      <Group justify="space-between">
+        <div>
+          <Link href={`/w/${workspaceId}/deals/${deal.id}`}>{deal.name}</Link>
+          <Title order={1}>Run {run.number}</Title>
+          <Text c="dimmed" size="sm">
+            Version {run.dealVersion} of the deal
+            {run.dealVersion === deal.version ? "" : ", which has changed since"};{" "}
+            {run.at.slice(0, 16).replace("T", " ")} UTC; {run.engine}; request{" "}
+            <code title={run.requestHash}>{run.requestHash.slice(0, 12)}</code>
+            {run.note && `; ${run.note}`}
+          </Text>
+        </div>
+        <Group>
+          <Button
+            variant="default"
+            onClick={() =>
+              saveFile(`run-${run.number}-request.json`, JSON.stringify(request, null, 2), "application/json")
+            }
+          >
+            Request as JSON
+          </Button>
+          <Button
+            variant="default"
+            onClick={() =>
+              saveFile(`run-${run.number}-report.json`, JSON.stringify(report, null, 2), "application/json")
+            }
+          >
+            Report as JSON
+          </Button>
+        </Group>
+      </Group>
+      <SimpleGrid cols={{ base: 2, sm: 3, md: 6 }}>
+        {pool.map(([label, value, unit, words]) => (
+          <div key={label}>
+            <Text size="xs" c="dimmed">
+              {label} ({words})
+            </Text>
+            <Text fw={600}>
+              <Figure value={value} unit={unit} />
+            </Text>
+          </div>
+        ))}
+      </SimpleGrid>
+      {report.tranches.length > 0 && (
+        <ClassesTable tranches={report.tranches} nameOf={nameOf} currency={request.currency ?? "EUR"} />
+      )}
+      <SimpleGrid cols={{ base: 1, md: 2 }}>
+        {report.tranches.length > 0 && (
+          <Hull classes={report.tranches.map((tranche) => ({ ...tranche, name: nameOf(tranche.id) }))} />
+        )}
+        {report.lossLaw && <LossLawChart law={report.lossLaw} marks={marks} />}
+        {report.timeline && (
+          <TimelineChart
+            timeline={report.timeline}
+            names={report.tranches.map((tranche) => nameOf(tranche.id))}
+          />
+        )}
+      </SimpleGrid>
+      {report.nthToDefault.length > 0 && (
+        <Table.ScrollContainer minWidth={480}>
+          <Table>
+            <Table.Thead>
+              <Table.Tr>
+                <Table.Th>n-th to default</Table.Th>
+                <Table.Th ta="right">Probability (%)</Table.Th>
+                <Table.Th ta="right">Par spread (bp)</Table.Th>
+                <Table.Th ta="right">Protection leg (%)</Table.Th>
+                <Table.Th ta="right">Annuity (years)</Table.Th>
+              </Table.Tr>
+            </Table.Thead>
+            <Table.Tbody>
+              {report.nthToDefault.map((contract) => (
+                <Table.Tr key={contract.n}>
+                  <Table.Td>{contract.n}</Table.Td>
+                  <Table.Td ta="right">
+                    <Figure value={contract.probability} unit="percent" />
+                  </Table.Td>
+                  <Table.Td ta="right">
+                    <Figure value={contract.parSpread} unit="basisPoints" />
+                  </Table.Td>
+                  <Table.Td ta="right">
+                    <Figure value={contract.protectionLeg} unit="percent" />
+                  </Table.Td>
+                  <Table.Td ta="right">
+                    <Figure value={contract.annuity} unit="years" />
+                  </Table.Td>
+                </Table.Tr>
+              ))}
+            </Table.Tbody>
+          </Table>
+        </Table.ScrollContainer>
+      )}
+      {report.warnings.length > 0 && (
+        <Alert color="yellow" title="Warnings">
+          {report.warnings.map((warning) => (
+            <Text size="sm" key={`${warning.code} ${warning.subject}`}>
+              {warning.message}
+            </Text>
+          ))}
+        </Alert>
+      )}
+      <Text size="sm" c="dimmed">
+        Bound on the numerical error of the expected loss below a strike:{" "}
+        <Figure value={report.numericalError} /> of the pool's notional.
+      </Text>
+    </Stack>
+  );
+}
