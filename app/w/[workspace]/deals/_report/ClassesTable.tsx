@@ -34,7 +34,7 @@ export function ClassesTable({
       header,
       cell: (cell) => <Figure value={cell.getValue()} unit={unit} />,
     });
-  const columns = [
+  const columns = helper.columns([
     helper.accessor((row) => nameOf(row.id), { id: "name", header: "Class" }),
     figure("attachment", "Attachment (%)", "percent"),
     figure("detachment", "Detachment (%)", "percent"),
@@ -48,7 +48,7 @@ export function ClassesTable({
     figure("standardDeviation", "Std. deviation (%)", "percent"),
     figure("leverage", "Leverage", "plain"),
     figure("defaultsToAttach", "Defaults to attach", "plain"),
-  ];
+  ]);
   const table = useTable({ features, columns, data: [...tranches] });
   return (
     <Table.ScrollContainer minWidth={1100}>
