@@ -4,24 +4,22 @@ import { join } from "node:path";
 import { defineConfig } from "@playwright/test";
 import { findChromium } from "./tests/runner/chromium";
 
-// Workers read this file again: what is chosen once is handed to them through the environment.
-process.env.BROWSER_TEST_PORT ??= String(4411);
-process.env.BROWSER_TEST_DATA ??= mkdtempSync(join(tmpdir(), "loadline-browser-"));
-const port = process.env.BROWSER_TEST_PORT;
-const address = `http://localhost:${port}`;
+const port = Number(process.env.BROWSER_TEST_PORT ?? 4311);
+const dataFolder = process.env.BROWSER_TEST_DATA ?? mkdtempSync(join(tmpdir(), "loadline-browser-"));
+process.env.BROWSER_TEST_DATA = dataFolder;
 const chromium = findChromium();
 
+/** Browser tests on the built app, on a port and a data folder of their own, in the system's Chromium. */
 export default defineConfig({
   testDir: "tests/browser",
   outputDir: "test-results",
-  timeout: 60_000,
-  expect: { timeout: 10_000 },
-  workers: 2,
-  retries: 0,
+  timeout: 120_000,
+  expect: { timeout: 20_000 },
+  workers: 1,
+  retries: process.env.CI ? 1 : 0,
   use: {
-    baseURL: address,
+    baseURL: `http://localhost:${port}`,
     viewport: { width: 1440, height: 900 },
-    trace: "retain-on-failure",
     launchOptions: {
       ...(chromium ? { executablePath: chromium } : {}),
       args: [
@@ -36,15 +34,16 @@ export default defineConfig({
     },
   },
   webServer: {
-    command: `npx next build && npx next start -p ${port}`,
-    url: `${address}/api/health`,
-    timeout: 240_000,
+    command: "node --import tsx lib/platform/start/main.ts",
+    url: `http://localhost:${port}/api/health`,
+    timeout: 300_000,
+    reuseExistingServer: false,
     env: {
-      PORT: port,
-      PUBLIC_URL: address,
-      DATA_DIR: process.env.BROWSER_TEST_DATA,
+      PORT: String(port),
+      DATA_DIR: dataFolder,
       DATABASE_URL: "",
-      NEXT_TELEMETRY_DISABLED: "1",
+      NEXT_MANUAL_SIG_HANDLE: "true",
+      PUBLIC_URL: `http://localhost:${port}`,
     },
   },
 });
