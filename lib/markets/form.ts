@@ -62,6 +62,24 @@ export function formOf(market: {
   };
 }
 
+/** Fields that only make sense together: who changes one of them decides on all. */
+const groups: readonly (readonly (keyof MarketForm)[])[] = [
+  ["name"],
+  ["pricingDate"],
+  ["discountKind", "rate", "nodes"],
+  ["scheduleKind", "perYear", "holidays"],
+];
+
+/** My changes since `base`, laid over their newer version: what I left alone is theirs. */
+export function mergedForm(base: MarketForm, mine: MarketForm, theirs: MarketForm): MarketForm {
+  const isMine = (fields: readonly (keyof MarketForm)[]) =>
+    fields.some((field) => JSON.stringify(mine[field]) !== JSON.stringify(base[field]));
+  const parts = groups
+    .filter(isMine)
+    .flatMap((fields) => fields.map((field): [keyof MarketForm, unknown] => [field, mine[field]]));
+  return { ...theirs, ...(Object.fromEntries(parts) as Partial<MarketForm>) };
+}
+
 /** Reads a form; every problem at once, by the path of its field. */
 export function readForm(form: MarketForm): FormReading {
   const problems: Record<string, string> = {};

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { readMarket } from "@/lib/markets/check";
-import { blankForm, formOf, readForm } from "@/lib/markets/form";
+import { blankForm, formOf, mergedForm, readForm } from "@/lib/markets/form";
 
 const flat = { ...blankForm("2026-11-30"), name: "Quay", rate: "2,5" };
 
@@ -75,6 +75,20 @@ describe("a market as typed", () => {
   ] as const)("refuses %s", (_, part, path) => {
     const reading = readForm({ ...flat, ...part, nodes: [...("nodes" in part ? part.nodes : flat.nodes)] });
     expect(!reading.ok && Object.keys(reading.problems)).toEqual([path]);
+  });
+});
+
+describe("my changes over a newer version", () => {
+  const theirs = { ...flat, name: "Quay B", rate: "3", holidays: "2026-12-25" };
+
+  it("leave theirs wherever I typed nothing", () => {
+    const mine = { ...flat, pricingDate: "2026-12-01" };
+    expect(mergedForm(flat, mine, theirs)).toEqual({ ...theirs, pricingDate: "2026-12-01" });
+  });
+
+  it("take the whole curve when I changed a part of it", () => {
+    const mine = { ...flat, discountKind: "zero" as const };
+    expect(mergedForm(flat, mine, theirs)).toEqual({ ...theirs, discountKind: "zero", rate: "2,5" });
   });
 });
 

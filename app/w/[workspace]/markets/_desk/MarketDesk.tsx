@@ -8,7 +8,7 @@ import { call } from "@/app/_ui/call";
 import { Problems } from "@/app/_ui/Problems";
 import { UndoButton } from "@/app/_ui/UndoButton";
 import { useKept } from "@/app/_ui/useKept";
-import { blankForm, formOf, type MarketForm, readForm } from "@/lib/markets/form";
+import { blankForm, formOf, type MarketForm, mergedForm, readForm } from "@/lib/markets/form";
 import type { Operations } from "@/lib/operations";
 import type { Problem } from "@/lib/platform/errors";
 import { DiscountFields } from "./DiscountFields";
@@ -23,6 +23,8 @@ type Saved = Pick<OpenMarket, "name" | "pricingDate" | "content" | "version">;
 
 interface Kept {
   readonly form: MarketForm;
+  /** The saved form and version that the typing began from. */
+  readonly base: MarketForm;
   readonly version: number;
 }
 
@@ -55,7 +57,11 @@ export function MarketDesk({
 
   const change = (part: Partial<MarketForm>) => {
     const next = { ...form, ...part };
-    setKept(JSON.stringify(next) === JSON.stringify(savedForm) ? null : { form: next, version });
+    setKept(
+      JSON.stringify(next) === JSON.stringify(kept?.base ?? savedForm)
+        ? null
+        : { form: next, base: kept?.base ?? savedForm, version },
+    );
   };
   const save = async () => {
     const now = readForm(form);
@@ -92,8 +98,14 @@ export function MarketDesk({
       {isBehind && (
         <NewerMarket
           theirs={savedForm}
-          mine={form}
-          onMine={() => setKept({ form, version: saved.version })}
+          mine={mergedForm(kept.base, form, savedForm)}
+          onMine={() =>
+            setKept({
+              form: mergedForm(kept.base, form, savedForm),
+              base: savedForm,
+              version: saved.version,
+            })
+          }
           onTheirs={() => setKept(null)}
         />
       )}

@@ -41,6 +41,7 @@ export function ImportDesk({
 }) {
   const router = useRouter();
   const [name, setName] = useState(into?.name ?? "");
+  const [source, setSource] = useState("");
   const [currency, setCurrency] = useState(into?.currency ?? "EUR");
   const [opened, setOpened] = useState<Opened | null>(null);
   const [trouble, setTrouble] = useState<string | null>(null);
@@ -54,12 +55,15 @@ export function ImportDesk({
     return <Alert color="gray">As a reader of this workspace you cannot import: ask a structurer.</Alert>;
   }
 
-  const open = (text: string, source: string | null) => {
+  const open = (text: string, file: string | null) => {
     const table = readTable(text);
     setRefused([]);
     setTrouble(table ? null : NO_TABLE);
     setOpened(table && { table, columns: recogniseColumns(table) });
-    if (table && source && name === "") setName(source.replace(/\.[a-z]+$/i, ""));
+    if (!table || file === null || (name !== "" && name !== source)) return;
+    const stem = file.replace(/\.[a-z]+$/i, "");
+    setSource(stem);
+    setName(stem);
   };
 
   const take = async (taken: ImportReading) => {
