@@ -96,9 +96,9 @@ function readUpfront(cells: RowCells): CreditInput | null {
   return { kind: "upfront", years: cells.columns[position]!.years ?? 5, upfront, coupon };
 }
 
-const kinds: readonly ColumnField[] = ["spread", "cumulative", "yearly", "hazard", "upfront"];
+const kinds: readonly ColumnField[] = ["spread", "cumulative", "yearly", "hazard", "upfront", "status"];
 
 function complainOfNone(cells: RowCells): void {
   const position = kinds.flatMap((field) => cells.positions(field))[0];
-  if (position !== undefined) cells.complain(position, "is empty: the name has no credit input");
+  if (position !== undefined) cells.complain(position, "gives the name no credit input");
 }

@@ -52,7 +52,7 @@ function columnProblems(columns: readonly ColumnReading[]): string[] {
   if (!has("id", "name")) problems.push("No column is read as id or name.");
   if (!has("notional")) problems.push("No column is read as notional.");
   if (!has("recovery", "lossGivenDefault")) problems.push("No column is read as recovery.");
-  if (!has("spread", "yearly", "cumulative", "hazard", "upfront")) {
+  if (!has("spread", "yearly", "cumulative", "hazard", "upfront", "status")) {
     problems.push(
       "No column is read as a credit input: spread, default probability, hazard, or upfront with coupon.",
     );

@@ -40,6 +40,13 @@ export function recogniseColumns(table: ImportTable): ColumnReading[] {
   });
 }
 
+/** The currency that the notional's header names, null where it names none (codes of ISO 4217). */
+export function currencyOf(columns: readonly ColumnReading[]): string | null {
+  const header = columns.find(({ field }) => field === "notional")?.header ?? "";
+  const codes = header.match(/\b[A-Z]{3}\b/g) ?? [];
+  return codes.find((code) => Intl.supportedValuesOf("currency").includes(code)) ?? null;
+}
+
 /** The mark the table's columns agree on, null where they do not or prove nothing. */
 function sharedMark(evidence: readonly MarkEvidence[]): DecimalMark | null {
   const comma = evidence.filter((found) => found.comma > found.point).length;

@@ -2,6 +2,7 @@ import { readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { decodeText } from "@/lib/pools/import/decode";
 import { readNames, readPool } from "@/lib/pools/import/read";
+import { currencyOf } from "@/lib/pools/import/recognise";
 import { rejectedCsv } from "@/lib/pools/import/rejected";
 import { readTable, withCell } from "@/lib/pools/import/table";
 import { poolNameProblems } from "@/lib/pricing/refusals";
@@ -98,7 +99,7 @@ describe("reading a file of names", () => {
       [3, "Recovery", "120%", "must be at least 0 % and below 100 %"],
       [3, "Spread 5Y (bp)", "eighty", "is not a number with a decimal point"],
       [4, "Id", "b", "is already the id of line 3"],
-      [4, "Spread 5Y (bp)", "", "is empty: the name has no credit input"],
+      [4, "Spread 5Y (bp)", "", "gives the name no credit input"],
       [5, "Name", "", "is empty: a row needs an id or a name"],
     ]);
     expect(reading.names.map(({ id }) => id)).toEqual(["d"]);
@@ -141,6 +142,25 @@ describe("reading a file of names", () => {
   it("refuses cumulative probabilities that fall, beside the later one", () => {
     const reading = readPool("id,notional,recovery,cum PD 1Y,cum PD 3Y\na,10,0.4,3%,2%");
     expect(reading.problems).toMatchObject([{ position: 4, reason: "must not be below that of 1 years" }]);
+  });
+
+  it("takes the line sep=; of a spreadsheet for what it is, and counts lines with it", () => {
+    const reading = readPool("sep=;\nid;notional;recovery;pd\na;-1;0,4;0,01");
+    expect(reading.problems).toMatchObject([{ line: 3, column: "notional" }]);
+  });
+
+  it("reads names in default by their status, whatever else stands in the row", () => {
+    const reading = readPool("id,notional,recovery,status,5Y\na,10,0.3,defaulted,\nb,10,0.4,,100");
+    expect(reading.names.map(({ credit }) => credit.kind)).toEqual(["defaulted", "spread"]);
+  });
+
+  it.each([
+    ["Notional (USD)", "USD"],
+    ["Nominal EUR m", "EUR"],
+    ["Notional", null],
+    ["Notional (ABC)", null],
+  ])("finds the currency in the header %s: %s", (header, currency) => {
+    expect(currencyOf(readPool(`id,${header},recovery,pd\na,1,0.4,0.01`).columns)).toBe(currency);
   });
 
   it("complains about a cell beyond the last header instead of dropping it", () => {
