@@ -3,6 +3,9 @@ import { parseDay } from "../quant/market/calendar";
 import type { PricingProblem } from "./problem";
 import { LIMITS, type PricingRequest, requestSchema } from "./request";
 
+/** Strikes closer than this are one strike to double precision. */
+const NARROWEST_TRANCHE = 1e-9;
+
 /** A request that passed every check of form and sense, or all its problems at once. */
 export type Checked =
   | { readonly ok: true; readonly request: PricingRequest }
@@ -302,7 +305,7 @@ function baseProblems(correlation: Loose, raw: unknown): PricingProblem[] {
     const { attachment, detachment } = asObject(quote);
     const path = ["correlation", "quotes", String(i)];
     if (!isNumber(attachment) || !isNumber(detachment)) continue;
-    if (attachment >= detachment)
+    if (detachment - attachment < NARROWEST_TRANCHE)
       problems.push(problem("strikes", path, raw, "must attach below where it detaches"));
     const before = asObject(quotes[i - 1]).detachment;
     const expected = i === 0 ? 0 : before;
@@ -326,7 +329,7 @@ function trancheProblems(tranches: readonly unknown[], raw: unknown): PricingPro
   for (const [i, row] of tranches.entries()) {
     const { id, attachment, detachment, running, upfront } = asObject(row);
     const path = ["tranches", String(i)];
-    if (isNumber(attachment) && isNumber(detachment) && attachment >= detachment) {
+    if (isNumber(attachment) && isNumber(detachment) && detachment - attachment < NARROWEST_TRANCHE) {
       problems.push(
         problem(
           "strikes",

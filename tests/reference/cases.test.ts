@@ -15,16 +15,26 @@ const folder = join(process.cwd(), "tests", "reference", "data", "cases");
 
 /** The value at a dotted path; `length` is an array's. */
 function at(report: unknown, path: string): unknown {
-  return path.split(".").reduce<unknown>((value, step) => (value === null || value === undefined ? undefined : (value as Record<string, unknown>)[step]), report);
+  return path
+    .split(".")
+    .reduce<unknown>(
+      (value, step) =>
+        value === null || value === undefined ? undefined : (value as Record<string, unknown>)[step],
+      report,
+    );
 }
 
 function mismatch(report: unknown, path: string, wanted: unknown, tolerance: number): string | null {
   const found = at(report, path);
   if (typeof wanted === "number") {
-    return typeof found === "number" && Math.abs(found - wanted) <= tolerance ? null : `${path} is ${found}, not ${wanted} within ${tolerance}`;
+    return typeof found === "number" && Math.abs(found - wanted) <= tolerance
+      ? null
+      : `${path} is ${found}, not ${wanted} within ${tolerance}`;
   }
   if (typeof wanted === "object" && wanted !== null && "min" in wanted) {
-    return typeof found === "number" && found >= Number(wanted.min) ? null : `${path} is ${found}, below ${wanted.min}`;
+    return typeof found === "number" && found >= Number(wanted.min)
+      ? null
+      : `${path} is ${found}, below ${wanted.min}`;
   }
   return found === wanted ? null : `${path} is ${found}, not ${wanted}`;
 }
@@ -38,14 +48,18 @@ describe("the report of a reference request is that of the independent implement
       const { errors, ...figures } = reference.expect;
       if (errors) {
         const paths = outcome.ok ? [] : outcome.problems.map((problem) => problem.path);
-        const missing = errors.filter((error) => !paths.some((path) => path === error || path.startsWith(`${error}.`)));
+        const missing = errors.filter(
+          (error) => !paths.some((path) => path === error || path.startsWith(`${error}.`)),
+        );
         expect(missing).toEqual([]);
         return;
       }
       expect(outcome.ok ? [] : outcome.problems).toEqual([]);
       if (!outcome.ok) return;
       expect(reportSchema.safeParse(outcome.report).error).toBeUndefined();
-      const wrong = Object.entries(figures).map(([path, wanted]) => mismatch(outcome.report, path, wanted, reference.tolerance[path] ?? 1e-9));
+      const wrong = Object.entries(figures).map(([path, wanted]) =>
+        mismatch(outcome.report, path, wanted, reference.tolerance[path] ?? 1e-9),
+      );
       expect(wrong.filter((line) => line !== null)).toEqual([]);
     });
   }

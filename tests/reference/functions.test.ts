@@ -1,12 +1,12 @@
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
 import { describe, expect, it } from "vitest";
-import { bivariateNormalCdf } from "@/lib/quant/maths/bivariateNormal";
-import { normalCdf, normalQuantile } from "@/lib/quant/maths/normal";
-import { gaussLegendre } from "@/lib/quant/maths/quadrature";
 import { parseDay } from "@/lib/quant/market/calendar";
 import { type DiscountInput, discountCurve, discountFactor } from "@/lib/quant/market/discountCurve";
 import { standardSchedule } from "@/lib/quant/market/schedule";
+import { bivariateNormalCdf } from "@/lib/quant/maths/bivariateNormal";
+import { normalCdf, normalQuantile } from "@/lib/quant/maths/normal";
+import { gaussLegendre } from "@/lib/quant/maths/quadrature";
 import { type BaseNode, baseCurve } from "@/lib/quant/tranche/baseCurve";
 
 function data<Content>(file: string): Content {
@@ -38,7 +38,8 @@ const functions = data<Functions>("functions.json");
 // Source: mpmath at 60 digits; Φ₂ cross-checked with R's mvtnorm.
 describe("NORMAL: relative error at most 1e-14, tails included", () => {
   it("Φ", () => {
-    for (const { x, value } of functions.phi) expect(Math.abs(normalCdf(x) / value - 1)).toBeLessThanOrEqual(1e-14);
+    for (const { x, value } of functions.phi)
+      expect(Math.abs(normalCdf(x) / value - 1)).toBeLessThanOrEqual(1e-14);
   });
   it("Φ⁻¹", () => {
     for (const { p, value } of functions.phiInv) {
@@ -54,7 +55,9 @@ describe("BIVARIATE: absolute error at most 1e-15 for every correlation", () => 
     }
   });
   it("with correlation near one and in deep tails, relative error at most 1e-12 where it is positive", () => {
-    for (const { x, y, rho, value } of data<{ x: number; y: number; rho: number; value: string }[]>("bivariate_extremes.json")) {
+    for (const { x, y, rho, value } of data<{ x: number; y: number; rho: number; value: string }[]>(
+      "bivariate_extremes.json",
+    )) {
       const found = bivariateNormalCdf(x, y, rho);
       expect(Math.abs(found - Number(value))).toBeLessThanOrEqual(5e-16);
       if (rho > 0) expect(Math.abs(found / Number(value) - 1)).toBeLessThanOrEqual(1e-12);
@@ -72,7 +75,11 @@ describe("SCHEDULE: standard periods, business days and accruals", () => {
   it("dates, days and times of four contracts", () => {
     for (const row of functions.schedule) {
       const holidays = new Set(row.holidays.map((holiday) => parseDay(holiday)!));
-      const { periods, accruedAtStart } = standardSchedule(parseDay(row.pricingDate)!, parseDay(row.maturity)!, holidays);
+      const { periods, accruedAtStart } = standardSchedule(
+        parseDay(row.pricingDate)!,
+        parseDay(row.maturity)!,
+        holidays,
+      );
       expect(periods.map((period) => Math.round(period.accrual * 360))).toEqual(row.accrualDays);
       expect(Math.round(accruedAtStart * 360)).toBe(row.accruedDays);
       for (const [j, period] of periods.entries()) {
@@ -88,7 +95,9 @@ describe("DISCOUNT: flat, zero and par curves", () => {
     for (const { curve, points } of functions.discount) {
       const built = discountCurve(curve);
       expect(built.ok).toBe(true);
-      if (built.ok) for (const { t, df } of points) expect(Math.abs(discountFactor(built.value, t) / df - 1)).toBeLessThanOrEqual(1e-13);
+      if (built.ok)
+        for (const { t, df } of points)
+          expect(Math.abs(discountFactor(built.value, t) / df - 1)).toBeLessThanOrEqual(1e-13);
     }
   });
 });
@@ -97,9 +106,18 @@ describe("BASE: interpolation and extrapolation of base correlations", () => {
   it("linear and monotone, flat and linear beyond", () => {
     for (const { nodes, points } of functions.interpolation) {
       for (const { strike, linearFlat, linearLinear, monotoneFlat } of points) {
-        expect(baseCurve(nodes, { interpolation: "linear", beyond: "flat" })(strike)).toBeCloseTo(linearFlat, 13);
-        expect(baseCurve(nodes, { interpolation: "linear", beyond: "linear" })(strike)).toBeCloseTo(linearLinear, 13);
-        expect(baseCurve(nodes, { interpolation: "monotone", beyond: "flat" })(strike)).toBeCloseTo(monotoneFlat, 13);
+        expect(baseCurve(nodes, { interpolation: "linear", beyond: "flat" })(strike)).toBeCloseTo(
+          linearFlat,
+          13,
+        );
+        expect(baseCurve(nodes, { interpolation: "linear", beyond: "linear" })(strike)).toBeCloseTo(
+          linearLinear,
+          13,
+        );
+        expect(baseCurve(nodes, { interpolation: "monotone", beyond: "flat" })(strike)).toBeCloseTo(
+          monotoneFlat,
+          13,
+        );
       }
     }
   });
@@ -117,10 +135,14 @@ interface Published {
 const published = data<Published[]>("published.json");
 
 describe("published tables of the bivariate normal", () => {
-  for (const entry of published.filter(({ topic, inputs }) => topic === "bivariate normal" && ["x", "y", "rho"].every((key) => key in inputs))) {
+  for (const entry of published.filter(
+    ({ topic, inputs }) => topic === "bivariate normal" && ["x", "y", "rho"].every((key) => key in inputs),
+  )) {
     it(`${entry.id}: ${entry.source}`, () => {
       const { x, y, rho } = entry.inputs;
-      expect(Math.abs(bivariateNormalCdf(x!, y!, rho!) - entry.value)).toBeLessThanOrEqual(entry.absoluteTolerance);
+      expect(Math.abs(bivariateNormalCdf(x!, y!, rho!) - entry.value)).toBeLessThanOrEqual(
+        entry.absoluteTolerance,
+      );
     });
   }
 });

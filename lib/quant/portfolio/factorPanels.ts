@@ -3,6 +3,8 @@ import type { FactorNames } from "./factorNames";
 
 const HIGHEST_FACTOR = 12.5;
 const WIDEST_PANEL = 4;
+/** Narrowest first panel, in widths of the steepest name's transition: where both ends of all names are settled the ratio of deviation to slope says nothing. */
+const NARROWEST = 0.4;
 
 /**
  * The factor value above which the conditional law is "no default" to within a mass of 1e-20: there it is settled and
@@ -49,6 +51,7 @@ function panelWidth({ thresholds, loadings }: FactorNames, sizes: readonly numbe
   let variance = 0;
   let slope = 0;
   let nearest = WIDEST_PANEL;
+  let steepest = 0;
   for (let i = 0; i < thresholds.length; i++) {
     const loading = loadings[i]!;
     const threshold = thresholds[i]!;
@@ -56,12 +59,13 @@ function panelWidth({ thresholds, loadings }: FactorNames, sizes: readonly numbe
     const scale = Math.sqrt((1 - loading) * (1 + loading));
     const x = (threshold - loading * factor) / scale;
     const steepness = Math.abs(loading) / scale;
+    steepest = Math.max(steepest, steepness);
     nearest = Math.min(nearest, (3 + Math.abs(x)) / steepness);
     const size = sizes[i]!;
     const probability = normalCdf(x);
-    variance += size * size * probability * (1 - probability);
+    variance += size * size * probability * normalCdf(-x);
     slope += size * normalDensity(x) * steepness;
   }
   const fluctuation = slope > 0 && variance > 0 ? (6 * Math.sqrt(variance)) / slope : WIDEST_PANEL;
-  return Math.min(nearest, fluctuation);
+  return Math.min(nearest, Math.max(fluctuation, NARROWEST / Math.max(steepest, 1e-3)));
 }
