@@ -1,6 +1,6 @@
 "use client";
 
-import { Alert, Button, Group, Stack, Text, TextInput, Title } from "@mantine/core";
+import { Alert, Button, Group, Stack, TextInput, Title } from "@mantine/core";
 import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { useDeferredValue, useMemo, useState } from "react";
@@ -16,6 +16,7 @@ import { type ImportTable, readTable, withCell } from "@/lib/pools/import/table"
 import { ColumnChoices } from "./ColumnChoices";
 import { ImportPreview } from "./ImportPreview";
 import { ImportSource } from "./ImportSource";
+import { TakeButtons } from "./TakeButtons";
 
 interface Target {
   readonly id: string;
@@ -161,46 +162,4 @@ export function ImportDesk({
 
 function problemAt(problems: readonly Problem[], path: string): string | null {
   return problems.find((problem) => problem.path === path)?.message ?? null;
-}
-
-function TakeButtons({
-  reading,
-  isBusy,
-  replaces,
-  onTake,
-  onRejected,
-}: {
-  reading: ImportReading;
-  isBusy: boolean;
-  replaces: boolean;
-  onTake: () => void;
-  onRejected: () => void;
-}) {
-  const bad = reading.rows.length - reading.names.length;
-  const isWhole = bad === 0 && reading.tableProblems.length === 0;
-  const count = reading.names.length;
-  const words = `${count} ${count === 1 ? "name" : "names"}`;
-  return (
-    <>
-      <Button
-        onClick={onTake}
-        loading={isBusy}
-        disabled={reading.tableProblems.length > 0 || count === 0}
-        {...(isWhole ? {} : { color: "orange.9" })}
-      >
-        {replaces ? `Replace the pool's names by ${words}` : `Store ${words}`}
-        {bad > 0 ? `, leave ${bad} out` : ""}
-      </Button>
-      {bad > 0 && (
-        <Button variant="default" onClick={onRejected}>
-          Save rejected rows as CSV
-        </Button>
-      )}
-      {bad > 0 && (
-        <Text size="sm">
-          {bad} {bad === 1 ? "row does" : "rows do"} not fit: mend below the column, or leave out.
-        </Text>
-      )}
-    </>
-  );
 }
