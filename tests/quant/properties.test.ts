@@ -37,15 +37,13 @@ function requestOf(
       credit: { kind: "hazard", rate },
     })),
     correlation: { kind: "flat", rho },
-    tranches: strikes
-      .slice(1)
-      .map((detachment, i) => ({
-        id: `T${i}`,
-        attachment: strikes[i]!,
-        detachment,
-        running: 0.01,
-        upfront: 0,
-      })),
+    tranches: strikes.slice(1).map((detachment, i) => ({
+      id: `T${i}`,
+      attachment: strikes[i]!,
+      detachment,
+      running: 0.01,
+      upfront: 0,
+    })),
     ...more,
   };
 }

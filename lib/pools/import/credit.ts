@@ -93,6 +93,7 @@ function readUpfront(cells: RowCells): CreditInput | null {
     return null;
   }
   if (coupon < 0) cells.complain(couponPosition!, "must not be negative");
+  if (coupon > 1_000) cells.complain(couponPosition!, "is no credible coupon: check the unit");
   return { kind: "upfront", years: cells.columns[position]!.years ?? 5, upfront, coupon };
 }
 
