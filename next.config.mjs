@@ -3,7 +3,6 @@ export default {
   serverExternalPackages: [
     "@electric-sql/pglite",
     "pg",
-    "pg-boss",
     "pglite-prisma-adapter",
     "@prisma/adapter-pg",
     "piscina",
