@@ -62,6 +62,10 @@ export interface MixtureRecord {
 }
 
 const DEEPEST = 14;
+/** Errors below this are noise of what the recursion trims, not the quadrature's: no panel is halved for them. */
+const BELOW_NOTICE = 1e-24;
+/** Laws that one mixture may work out; past it the remaining panels are taken as they are and their error is reported. */
+const MOST_EVALUATIONS = 30_000;
 
 /**
  * ∫ φ(m) law(m) dm over the panels between `boundaries`, each panel by the Gauss–Kronrod pair of 10 and 21 points
@@ -108,10 +112,10 @@ export function mixOverFactor(
       const estimate = panelError(kronrod[i]!, gauss[i]!, scale);
       const total = Math.max(Math.abs(totals[i]!) + Math.abs(kronrod[i]!), 0.5 * (expected?.[i] ?? 0));
       const allowed = Math.max(Math.min(accuracy.absolute, accuracy.relative * total), total * 1e-15) * 0.1;
-      if (estimate > allowed && estimate > 1e-40) isSettled = false;
+      if (estimate > allowed && estimate > BELOW_NOTICE) isSettled = false;
       worst = Math.max(worst, estimate);
     }
-    if (isSettled || depth >= DEEPEST) {
+    if (isSettled || depth >= DEEPEST || evaluations > MOST_EVALUATIONS) {
       family.acceptPanel();
       for (let i = 0; i < probes; i++) totals[i]! += kronrod[i]!;
       error += worst;
