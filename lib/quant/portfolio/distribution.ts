@@ -22,6 +22,9 @@ import type { Portfolio } from "./portfolio";
 import { type SectorGroups, sectorLaw } from "./sectorLaw";
 import { MOST_SUBSET_NAMES, subsetLaw } from "./subsetLaw";
 
+/** Above this correlation the law is that of correlation one, to within 1e-7 of any expected loss. */
+const COMONOTONIC = 1 - 1e-14;
+
 /** Which sum of default amounts is meant. */
 export type AmountKind = "loss" | "recovery";
 
@@ -142,7 +145,8 @@ export class PoolLaws {
     if (this.law.kind === "largePool") return largePoolDistribution(this.singleClass(amounts, j, dependence));
     const at = thresholds[j]!;
     if (j === 0 || amounts.length === 0 || amounts.every((amount) => amount === 0)) return certainlyNothing();
-    if (dependence.kind === "flat" && dependence.rho === 1) return atomic(comonotonicLaw(amounts, at));
+    if (dependence.kind === "flat" && dependence.rho > COMONOTONIC)
+      return atomic(comonotonicLaw(amounts, at));
     if (dependence.kind === "sector") return this.sectorDistribution(kind, dependence, at, strikes, smooth);
     const loadings = this.loadingsOf(dependence);
     const grid = this.gridOf(kind, smooth ? 3 : 2);

@@ -3,6 +3,9 @@ import type { FactorNames } from "./factorNames";
 
 const HIGHEST_FACTOR = 12.5;
 const WIDEST_PANEL = 4;
+/** Beyond this many widths from its transition a name's default is settled either way. */
+const SETTLED = 9;
+const MOST_PANELS = 4_000;
 /** Narrowest first panel, in widths of the steepest name's transition: where both ends of all names are settled the ratio of deviation to slope says nothing. */
 const NARROWEST = 0.4;
 
@@ -38,12 +41,13 @@ export function panelBoundaries(
 ): number[] {
   const boundaries = [low];
   let at = low;
-  while (at < high) {
+  while (at < high && boundaries.length < MOST_PANELS) {
     const first = panelWidth(names, sizes, at);
     const width = Math.min(first, panelWidth(names, sizes, at + first), WIDEST_PANEL);
     at = high - at < 1.4 * width ? high : at + width;
     boundaries.push(at);
   }
+  if (at < high) boundaries.push(high);
   return boundaries;
 }
 
@@ -60,7 +64,8 @@ function panelWidth({ thresholds, loadings }: FactorNames, sizes: readonly numbe
     const x = (threshold - loading * factor) / scale;
     const steepness = Math.abs(loading) / scale;
     steepest = Math.max(steepest, steepness);
-    nearest = Math.min(nearest, (3 + Math.abs(x)) / steepness);
+    nearest = Math.min(nearest, (1.5 + 0.5 * Math.abs(x)) / steepness);
+    if (Math.abs(x) > SETTLED) continue;
     const size = sizes[i]!;
     const probability = normalCdf(x);
     variance += size * size * probability * normalCdf(-x);
