@@ -111,3 +111,44 @@ describe("LAW: against every set of defaults and a trapezoid rule (independent i
     }
   });
 });
+
+describe("LAW: the stated numerical error", () => {
+  it("covers a shared grid even at strikes that the pool's losses reach exactly: 14 names against a finer grid", () => {
+    const losses = Array.from({ length: 14 }, (_, i) => 1 + ((i * 31) % 17) / 7.003 + i * 0.0137);
+    const total = losses.reduce((sum, loss) => sum + loss, 0);
+    const strikes = [losses[1]!, losses[2]! + losses[5]!, losses[1]! + losses[4]!].map(
+      (loss) => loss / total,
+    );
+    const at = (unit: number) => {
+      const outcome = price({
+        format: 1,
+        schedule: { kind: "even", years: 1, perYear: 1 },
+        discount: { kind: "flat", rate: 0 },
+        pool: losses.map((notional, i) => ({
+          id: `N${i}`,
+          notional,
+          recovery: 0,
+          credit: { kind: "hazard", rate: i % 2 ? 0.02 : 0.3 },
+        })),
+        correlation: { kind: "flat", rho: 0.3 },
+        tranches: strikes.map((detachment, i) => ({
+          id: `T${i}`,
+          attachment: 0,
+          detachment,
+          running: 0.01,
+          upfront: 0,
+        })),
+        law: { kind: "finite", unit },
+      });
+      if (!outcome.ok) throw new Error(outcome.problems.map((problem) => problem.message).join(" "));
+      return outcome.report;
+    };
+    const coarse = at(5.3e-4);
+    const fine = at(3.1e-5);
+    for (const [i, strike] of strikes.entries()) {
+      const error = Math.abs(coarse.tranches[i]!.expectedLoss! - fine.tranches[i]!.expectedLoss!) * strike;
+      expect(error).toBeLessThanOrEqual(coarse.numericalError + fine.numericalError);
+    }
+    expect(coarse.numericalError).toBeLessThanOrEqual(5.3e-4 / 4 + 1e-9);
+  });
+});
