@@ -33,7 +33,14 @@ export function LossLawChart({
       </Text>
       <ResponsiveContainer width="100%" height={260} initialDimension={{ width: 480, height: 260 }}>
         <BarChart data={data} barCategoryGap={0}>
-          <XAxis dataKey="loss" type="number" domain={[0, Math.max(end, 0.1)]} unit=" %" fontSize={11} />
+          <XAxis
+            dataKey="loss"
+            type="number"
+            domain={[0, Math.max(end, 0.1)]}
+            unit=" %"
+            tickFormatter={(value) => fourDigits(value / 100, "percent")}
+            fontSize={11}
+          />
           <YAxis fontSize={11} width={44} />
           <Tooltip
             formatter={(value) => [`${fourDigits(Number(value))} %`, "Probability"]}
