@@ -1,5 +1,5 @@
 import { dealIn } from "../deals/commands";
-import { dealInput } from "../deals/schema";
+import { type DealContent, dealInput } from "../deals/schema";
 import { notFound } from "../platform/errors";
 import { defineQuery } from "../platform/operation";
 import { runInput } from "./schema";
@@ -45,8 +45,15 @@ const open = defineQuery({
     await member(workspaceId);
     const run = await tx.run.findFirst({ where: { id: runId, workspaceId } });
     if (!run) throw notFound("run");
+    const version = await tx.dealVersion.findUnique({
+      where: { dealId_version: { dealId: run.dealId, version: run.dealVersion } },
+    });
+    const fields = version?.content as { readonly content?: DealContent } | undefined;
     return {
       id: run.id,
+      dealId: run.dealId,
+      /** Names of the classes as they were in the version that was priced. */
+      classNames: Object.fromEntries((fields?.content?.classes ?? []).map(({ id, name }) => [id, name])),
       number: run.number,
       dealVersion: run.dealVersion,
       requestHash: run.requestHash,

@@ -1,3 +1,4 @@
+import { notFound } from "next/navigation";
 import { ask } from "@/app/_ui/ask";
 import { queries as deals } from "@/lib/deals/queries";
 import { queries } from "@/lib/runs/queries";
@@ -11,13 +12,13 @@ export default async function Page({
   const { workspace: workspaceId, deal: dealId, run: runId } = await params;
   const deal = await ask(deals.open, { workspaceId, dealId });
   const run = await ask(queries.open, { workspaceId, runId });
-  const names = Object.fromEntries(deal.content.classes.map((row) => [row.id, row.name]));
+  if (run.dealId !== dealId) notFound();
   return (
     <RunView
       workspaceId={workspaceId}
       deal={{ id: deal.id, name: deal.name, version: deal.version }}
       run={run}
-      classNames={names}
+      classNames={run.classNames}
     />
   );
 }
