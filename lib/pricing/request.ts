@@ -186,5 +186,4 @@ export type DiscountInput = z.infer<typeof discountSchema>;
 export type CorrelationInput = z.infer<typeof correlationSchema>;
 export type BaseCorrelationInput = Extract<CorrelationInput, { kind: "base" }>;
 export type TrancheInput = z.infer<typeof trancheSchema>;
-export type QuoteInput = z.infer<typeof quoteSchema>;
 export type Extra = (typeof extras)[number];

@@ -23,11 +23,6 @@ async function open(): Promise<Store> {
   }
 }
 
-/** Uses an already open store (tests, one-off programs). */
-export function useStore(opened: Store): void {
-  shared.loadlineStore = Promise.resolve(opened);
-}
-
 /** Closes the store if it is open. */
 export async function closeStore(): Promise<void> {
   const opened = shared.loadlineStore;

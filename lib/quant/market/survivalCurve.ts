@@ -64,10 +64,3 @@ export function defaultProbability(curve: SurvivalCurve, t: number): number {
 export function survivalProbability(curve: SurvivalCurve, t: number): number {
   return exp(-cumulativeHazard(curve, t));
 }
-
-/** Hazard rates on the pieces that end at each node. */
-export function hazardRates(curve: SurvivalCurve): number[] {
-  return curve.cumulative.map(
-    (value, i) => (value - (curve.cumulative[i - 1] ?? 0)) / (curve.times[i]! - (curve.times[i - 1] ?? 0)),
-  );
-}

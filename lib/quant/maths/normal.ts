@@ -70,11 +70,6 @@ export function normalCdf(x: number): number {
   return x > 0 ? 1 - tail : tail;
 }
 
-/** 1 − Φ(x), keeping its digits for large x. */
-export function normalCdfComplement(x: number): number {
-  return normalCdf(-x);
-}
-
 const QUANTILE_CENTRE_TOP = [
   2.5090809287301226727e3, 3.3430575583588128105e4, 6.7265770927008700853e4, 4.5921953931549871457e4,
   1.3731693765509461125e4, 1.9715909503065514427e3, 1.3314166789178437745e2, 3.387132872796366608,

@@ -75,10 +75,3 @@ function tail(law: AmountLaw, from: number): number {
   for (let i = amounts.length - 1; i >= 0 && amounts[i]! > from; i--) sum += masses[i]!;
   return sum;
 }
-
-/** E[X]. */
-export function expectedAmount(law: AmountLaw): number {
-  let sum = 0;
-  for (let i = law.amounts.length - 1; i >= 0; i--) sum += law.amounts[i]! * law.masses[i]!;
-  return sum;
-}

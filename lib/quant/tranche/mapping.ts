@@ -31,24 +31,14 @@ export function mappedStrike(kind: MappingKind, pools: MappedPools, strike: numb
 
 /** The first sign change from below to above zero on [0, 1], or null. */
 function firstRoot(miss: (strike: number) => number): number | null {
-  let from = 0;
-  let before = miss(0);
-  if (before === 0) return 0;
-  if (before > 0) return null;
+  const atZero = miss(0);
+  if (atZero === 0) return 0;
+  if (atZero > 0) return null;
   for (let i = 1; i <= SCAN; i++) {
     const to = i / SCAN;
-    const value = miss(to);
-    if (value >= 0)
-      return value === 0 && i === SCAN ? brentOrEnd(miss, from, to) : brentRoot(miss, from, to, 1e-13);
-    from = to;
-    before = value;
+    if (miss(to) >= 0) return brentRoot(miss, (i - 1) / SCAN, to, 1e-13);
   }
   return null;
-}
-
-function brentOrEnd(miss: (strike: number) => number, from: number, to: number): number {
-  const before = miss(from);
-  return before < 0 ? to : from;
 }
 
 function poolLoss(laws: PoolLaws): number {
