@@ -1,4 +1,4 @@
-import { type ConditionalFamily, mixOverFactor } from "../maths/adaptiveMixture";
+import { type ConditionalFamily, mixOverFactor, withoutFactor } from "../maths/adaptiveMixture";
 import { gaussLegendre } from "../maths/quadrature";
 import { ConditionalProbabilities, type FactorNames } from "../portfolio/factorNames";
 import { panelBoundaries } from "../portfolio/factorPanels";
@@ -26,9 +26,7 @@ export function nthPeriod(period: BasketPeriod, payoffs: readonly number[], most
   const family = new NthFamily(period, payoffs, most);
   const isFlat = period.after.loadings.every((loading) => loading === 0);
   if (isFlat) {
-    family.evaluate(0, new Float64Array(family.probes));
-    family.accumulate(1);
-    family.acceptPanel();
+    withoutFactor(family);
   } else {
     const sizes = payoffs.map(() => 1);
     const boundaries = panelBoundaries(sizes, period.after, LOWEST_FACTOR, -LOWEST_FACTOR);

@@ -67,6 +67,33 @@ const BELOW_NOTICE = 1e-24;
 /** Laws that one mixture may work out; past it the remaining panels are taken as they are and their error is reported. */
 const MOST_EVALUATIONS = 30_000;
 
+/** Takes the law at factor zero for the whole mixture: right where nothing depends on the factor. */
+export function withoutFactor(family: ConditionalFamily): void {
+  family.evaluate(0, new Float64Array(family.probes));
+  family.clearPanel();
+  family.accumulate(1);
+  family.acceptPanel();
+}
+
+/** The probes' mixed values to a first approximation, every panel taken once: the size that accuracy is judged by. */
+export function surveyProbes(family: ConditionalFamily, boundaries: readonly number[]): Float64Array {
+  const values = new Float64Array(family.probes);
+  const totals = new Float64Array(family.probes);
+  for (let i = 0; i + 1 < boundaries.length; i++) {
+    const half = 0.5 * (boundaries[i + 1]! - boundaries[i]!);
+    const centre = 0.5 * (boundaries[i + 1]! + boundaries[i]!);
+    const panel = new Float64Array(family.probes);
+    for (const { node, kronrod } of RULE) {
+      const factor = centre + half * node;
+      const weight = kronrod * (normalDensity(factor) * half);
+      family.evaluate(factor, values);
+      for (let k = 0; k < panel.length; k++) panel[k]! += weight * values[k]!;
+    }
+    for (let k = 0; k < totals.length; k++) totals[k]! += panel[k]!;
+  }
+  return totals;
+}
+
 /**
  * ∫ φ(m) law(m) dm over the panels between `boundaries`, each panel by the Gauss–Kronrod pair of 10 and 21 points
  * (Piessens et al., QUADPACK, 1983) and halved until every probe is settled. The caller adds what lies outside.

@@ -140,8 +140,8 @@ export class PoolLaws {
     upTo: number,
     smooth: boolean,
   ): Distribution {
-    const { live, thresholds } = this.portfolio;
-    const amounts = live.map((name) => (kind === "loss" ? name.loss : name.recovered));
+    const { thresholds } = this.portfolio;
+    const amounts = this.amountsOf(kind);
     if (this.law.kind === "largePool") return largePoolDistribution(this.singleClass(amounts, j, dependence));
     const at = thresholds[j]!;
     if (j === 0 || amounts.length === 0 || amounts.every((amount) => amount === 0)) return certainlyNothing();
@@ -170,7 +170,7 @@ export class PoolLaws {
     strikes: readonly number[],
     smooth: boolean,
   ): Distribution {
-    const amounts = this.portfolio.live.map((name) => (kind === "loss" ? name.loss : name.recovered));
+    const amounts = this.amountsOf(kind);
     if (between >= 1) return atomic(comonotonicLaw(amounts, thresholds));
     const grid = this.gridOf(kind, smooth ? 3 : 2) ?? amountGrid(amounts, smooth ? 3 : 2);
     if (within === between) {
@@ -180,6 +180,10 @@ export class PoolLaws {
       );
     }
     return atomic(sectorLaw(grid, thresholds, this.groups, { within, between }, strikes));
+  }
+
+  private amountsOf(kind: AmountKind): number[] {
+    return this.portfolio.live.map((name) => (kind === "loss" ? name.loss : name.recovered));
   }
 
   private loadingsOf(dependence: Dependence): Float64Array {
@@ -193,7 +197,7 @@ export class PoolLaws {
     const key = `${kind} ${landingPoints}`;
     const known = this.grids.get(key);
     if (known !== undefined) return known;
-    const amounts = this.portfolio.live.map((name) => (kind === "loss" ? name.loss : name.recovered));
+    const amounts = this.amountsOf(kind);
     const imposed = this.law.kind === "finite" && kind === "loss" ? this.law.unit : undefined;
     const isFew = amounts.length <= MOST_SUBSET_NAMES && imposed === undefined && exactUnit(amounts) === null;
     const grid = isFew || amounts.length === 0 ? null : amountGrid(amounts, landingPoints, imposed);

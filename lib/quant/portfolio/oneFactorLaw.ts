@@ -1,5 +1,11 @@
 import { ConditionalLaw } from "../kernel/recursion";
-import { type ConditionalFamily, type MixtureAccuracy, mixOverFactor } from "../maths/adaptiveMixture";
+import {
+  type ConditionalFamily,
+  type MixtureAccuracy,
+  mixOverFactor,
+  surveyProbes,
+  withoutFactor,
+} from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
 import type { AmountGrid } from "./amountGrid";
 import { ConditionalProbabilities, type FactorNames } from "./factorNames";
@@ -96,21 +102,16 @@ export function oneFactorLaw(
   const conditional = new ConditionalProbabilities(names);
   const strikes = request.strikes.map((strike) => strike / grid.unit);
   const family = new GridFamily(grid, conditional, strikes, top);
-  const isFlat = names.loadings.every((loading) => loading === 0);
-  if (isFlat) {
-    family.evaluate(0, new Float64Array(family.probes));
-    family.clearPanel();
-    family.accumulate(1);
-    family.acceptPanel();
+  if (names.loadings.every((loading) => loading === 0)) {
+    withoutFactor(family);
     return finished(grid, family, 0, new Float64Array(family.probes), 1);
   }
   const high = settledFrom(names);
   const boundaries = panelBoundaries(gridSizes(grid), names, LOWEST_FACTOR, high);
-  const likely = expected ?? mixOverFactor(family, boundaries, { absolute: 1e9, relative: 1e9 }, null).totals;
-  const fresh = expected ? family : new GridFamily(grid, conditional, strikes, top);
-  const record = mixOverFactor(fresh, boundaries, MIXTURE_ACCURACY, likely);
-  fresh.total[0]! += normalCdf(-high);
-  return finished(grid, fresh, record.error, record.totals, record.evaluations);
+  const likely = expected ?? surveyProbes(family, boundaries);
+  const record = mixOverFactor(family, boundaries, MIXTURE_ACCURACY, likely);
+  family.total[0]! += normalCdf(-high);
+  return finished(grid, family, record.error, record.totals, record.evaluations);
 }
 
 /** Each name's amount in grid steps. */

@@ -1,4 +1,4 @@
-import { type ConditionalFamily, mixOverFactor } from "../maths/adaptiveMixture";
+import { type ConditionalFamily, mixOverFactor, withoutFactor } from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
 import type { AmountGrid } from "./amountGrid";
 import { comonotonicLaw } from "./comonotonicLaw";
@@ -33,9 +33,7 @@ export function sectorLaw(
   const names = { thresholds, loadings: new Float64Array(thresholds.length).fill(loading) };
   let error = 0;
   if (loading === 0) {
-    family.evaluate(0, new Float64Array(family.probes));
-    family.accumulate(1);
-    family.acceptPanel();
+    withoutFactor(family);
   } else {
     const high = settledFrom(names);
     const boundaries = panelBoundaries(gridSizes(grid), names, LOWEST_FACTOR, high);

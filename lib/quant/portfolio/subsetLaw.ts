@@ -1,4 +1,4 @@
-import { type ConditionalFamily, mixOverFactor } from "../maths/adaptiveMixture";
+import { type ConditionalFamily, mixOverFactor, surveyProbes, withoutFactor } from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
 import { ConditionalProbabilities, type FactorNames } from "./factorNames";
 import { panelBoundaries, settledFrom } from "./factorPanels";
@@ -94,19 +94,14 @@ export function subsetLaw(
 ): AmountLaw {
   const subsets = subsetsOf(amounts);
   const conditional = new ConditionalProbabilities(names);
-  const isFlat = names.loadings.every((loading) => loading === 0);
   const family = new SubsetFamily(subsets, conditional, strikes);
-  if (isFlat) {
-    family.evaluate(0, new Float64Array(family.probes));
-    family.accumulate(1);
-    family.acceptPanel();
+  if (names.loadings.every((loading) => loading === 0)) {
+    withoutFactor(family);
     return { amounts: subsets.amounts, masses: family.total, overflow: 0, error: 0 };
   }
   const high = settledFrom(names);
   const boundaries = panelBoundaries(amounts, names, LOWEST_FACTOR, high);
-  const { totals } = mixOverFactor(family, boundaries, { absolute: 1e9, relative: 1e9 }, null);
-  const settled = new SubsetFamily(subsets, conditional, strikes);
-  const record = mixOverFactor(settled, boundaries, MIXTURE_ACCURACY, totals);
-  settled.total[0]! += normalCdf(-high);
-  return { amounts: subsets.amounts, masses: settled.total, overflow: 0, error: record.error };
+  const record = mixOverFactor(family, boundaries, MIXTURE_ACCURACY, surveyProbes(family, boundaries));
+  family.total[0]! += normalCdf(-high);
+  return { amounts: subsets.amounts, masses: family.total, overflow: 0, error: record.error };
 }
