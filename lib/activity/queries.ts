@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { peopleNames } from "../platform/accounts/peopleNames";
 import { defineQuery } from "../platform/operation";
 import { inWorkspace } from "../workspaces/schema";
 
@@ -22,16 +23,15 @@ const list = defineQuery({
       orderBy: { id: "desc" },
       take: PAGE,
     });
-    const people = await tx.user.findMany({
-      where: { id: { in: rows.map((row) => row.actorId) } },
-      select: { id: true, name: true },
-    });
-    const names = new Map(people.map((person) => [person.id, person.name]));
+    const nameOf = await peopleNames(
+      tx,
+      rows.map((row) => row.actorId),
+    );
     return {
       rows: rows.map(
         ({ id, actorId, kind, subjectKind, subjectId, dealId: deal, before: was, after, at }) => ({
           id: String(id),
-          by: names.get(actorId) ?? "a former member",
+          by: nameOf(actorId),
           kind,
           subjectKind,
           subjectId,

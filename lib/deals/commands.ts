@@ -5,7 +5,7 @@ import { notFound, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
 import { poolIn } from "../pools/commands";
 import { namesOf } from "../pools/names";
-import { mayEdit, need } from "../workspaces/policy";
+import { asEditor } from "../workspaces/guards";
 import { checkDeal } from "./check";
 import { archiveInput, copyInput, createInput, type DealContent, saveInput, versionInput } from "./schema";
 
@@ -13,7 +13,7 @@ const create = defineCommand({
   name: "deals.create",
   input: createInput,
   async run(context, { workspaceId, ...deal }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change deals");
     await checkParts(context, workspaceId, deal);
     return { dealId: await makeDeal(context, workspaceId, deal, "deal.created") };
   },
@@ -23,7 +23,7 @@ const save = defineCommand({
   name: "deals.save",
   input: saveInput,
   async run(context, { workspaceId, dealId, version, ...deal }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change deals");
     const before = await dealIn(context, workspaceId, dealId, true);
     if (before.version !== version) throw staleVersion("deal", snapshot(before));
     await checkParts(context, workspaceId, deal);
@@ -36,7 +36,7 @@ const restoreVersion = defineCommand({
   name: "deals.restoreVersion",
   input: versionInput,
   async run(context, { workspaceId, dealId, version }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change deals");
     const before = await dealIn(context, workspaceId, dealId, true);
     const old = await context.tx.dealVersion.findUnique({ where: { dealId_version: { dealId, version } } });
     if (!old) throw notFound("version");
@@ -51,7 +51,7 @@ const copy = defineCommand({
   name: "deals.copy",
   input: copyInput,
   async run(context, { workspaceId, dealId, name }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change deals");
     const { poolId, marketId, content } = await dealIn(context, workspaceId, dealId);
     const deal = { name, poolId, marketId, content: content as DealContent };
     return { dealId: await makeDeal(context, workspaceId, deal, "deal.copied") };
@@ -62,7 +62,7 @@ const archive = defineCommand({
   name: "deals.archive",
   input: archiveInput,
   async run(context, { workspaceId, dealId, archived }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change deals");
     const { tx, now, record, emit } = context;
     await dealIn(context, workspaceId, dealId);
     await tx.deal.update({ where: { id: dealId }, data: { archivedAt: archived ? now : null } });
@@ -151,11 +151,6 @@ async function writeVersion(
     after: { ...deal, version },
   });
   await emit({ workspaceId, dealId: before.id, kind, payload: { dealId: before.id, version } });
-}
-
-async function asEditor(context: QueryContext, workspaceId: string): Promise<void> {
-  const member = await context.member(workspaceId);
-  need(mayEdit(member), member.role, "change deals");
 }
 
 /** The deal, if it is the workspace's; locked when it is about to be written. */

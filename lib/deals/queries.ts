@@ -1,5 +1,6 @@
 import { marketIn } from "../markets/commands";
 import type { MarketContent } from "../markets/schema";
+import { peopleNames } from "../platform/accounts/peopleNames";
 import { defineQuery, type QueryContext } from "../platform/operation";
 import { poolIn } from "../pools/commands";
 import { namesOf } from "../pools/names";
@@ -122,15 +123,14 @@ const history = defineQuery({
       where: { dealId },
       orderBy: { version: "desc" },
     });
-    const people = await context.tx.user.findMany({
-      where: { id: { in: versions.map((row) => row.savedById) } },
-      select: { id: true, name: true },
-    });
-    const names = new Map(people.map((person) => [person.id, person.name]));
+    const nameOf = await peopleNames(
+      context.tx,
+      versions.map((row) => row.savedById),
+    );
     return {
       versions: versions.map(({ version, savedById, savedAt, content }) => ({
         version,
-        savedBy: names.get(savedById) ?? "a former member",
+        savedBy: nameOf(savedById),
         savedAt: savedAt.toISOString(),
         content,
       })),

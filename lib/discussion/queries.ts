@@ -1,5 +1,6 @@
 import { dealIn } from "../deals/commands";
 import { dealInput } from "../deals/schema";
+import { peopleNames } from "../platform/accounts/peopleNames";
 import { defineQuery } from "../platform/operation";
 import { mayChange, mayComment } from "./policy";
 
@@ -15,11 +16,7 @@ const list = defineQuery({
       include: { comments: { orderBy: { createdAt: "asc" } } },
     });
     const authors = threads.flatMap((thread) => thread.comments.map((comment) => comment.authorId));
-    const people = await context.tx.user.findMany({
-      where: { id: { in: authors } },
-      select: { id: true, name: true },
-    });
-    const names = new Map(people.map((person) => [person.id, person.name]));
+    const nameOf = await peopleNames(context.tx, authors);
     return {
       may: { comment: mayComment(member) },
       threads: threads.map(({ id, resolvedAt, comments }) => ({
@@ -27,7 +24,7 @@ const list = defineQuery({
         isResolved: resolvedAt !== null,
         comments: comments.map((comment) => ({
           id: comment.id,
-          author: names.get(comment.authorId) ?? "a former member",
+          author: nameOf(comment.authorId),
           body: comment.body,
           version: comment.version,
           at: comment.createdAt.toISOString(),

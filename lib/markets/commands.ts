@@ -1,7 +1,7 @@
 import { randomUUID } from "node:crypto";
 import { notFound, Refusal, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
-import { mayEdit, need } from "../workspaces/policy";
+import { asEditor } from "../workspaces/guards";
 import { marketProblems } from "./check";
 import { archiveInput, copyInput, createInput, type MarketContent, saveInput } from "./schema";
 
@@ -9,7 +9,7 @@ const create = defineCommand({
   name: "markets.create",
   input: createInput,
   async run(context, { workspaceId, name, pricingDate, content }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change markets");
     checkMarket(pricingDate, content);
     return { marketId: await makeMarket(context, workspaceId, name, pricingDate, content) };
   },
@@ -19,7 +19,7 @@ const save = defineCommand({
   name: "markets.save",
   input: saveInput,
   async run(context, { workspaceId, marketId, version, name, pricingDate, content }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change markets");
     const { tx, record, emit } = context;
     const before = await marketIn(context, workspaceId, marketId, true);
     if (before.version !== version) {
@@ -55,7 +55,7 @@ const copy = defineCommand({
   name: "markets.copy",
   input: copyInput,
   async run(context, { workspaceId, marketId, name, pricingDate }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change markets");
     const market = await marketIn(context, workspaceId, marketId);
     const content = market.content as MarketContent;
     checkMarket(pricingDate, content);
@@ -67,7 +67,7 @@ const archive = defineCommand({
   name: "markets.archive",
   input: archiveInput,
   async run(context, { workspaceId, marketId, archived }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change markets");
     const { tx, now, record, emit } = context;
     await marketIn(context, workspaceId, marketId);
     await tx.market.update({ where: { id: marketId }, data: { archivedAt: archived ? now : null } });
@@ -104,11 +104,6 @@ async function makeMarket(
 function checkMarket(pricingDate: string, content: MarketContent): void {
   const problems = marketProblems(pricingDate, content);
   if (problems.length > 0) throw new Refusal("invalid", problems);
-}
-
-async function asEditor(context: QueryContext, workspaceId: string): Promise<void> {
-  const member = await context.member(workspaceId);
-  need(mayEdit(member), member.role, "change markets");
 }
 
 /** The market, if it is the workspace's; locked when it is about to be written. */

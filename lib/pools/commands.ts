@@ -1,7 +1,7 @@
 import { randomUUID } from "node:crypto";
 import { notFound, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
-import { mayEdit, need } from "../workspaces/policy";
+import { asEditor } from "../workspaces/guards";
 import { checkedNames, namesOf, writeNames } from "./names";
 import { archiveInput, copyInput, createInput, saveInput } from "./schema";
 
@@ -9,7 +9,7 @@ const create = defineCommand({
   name: "pools.create",
   input: createInput,
   async run(context, { workspaceId, name, currency, names: raw }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change pools");
     const names = checkedNames(raw);
     return { poolId: await makePool(context, workspaceId, name, currency, names, "pool.created") };
   },
@@ -19,7 +19,7 @@ const save = defineCommand({
   name: "pools.save",
   input: saveInput,
   async run(context, { workspaceId, poolId, version, name, currency, names: raw }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change pools");
     const { tx, record, emit } = context;
     const pool = await poolIn(context, workspaceId, poolId, true);
     const before = await namesOf(tx, poolId);
@@ -53,7 +53,7 @@ const copy = defineCommand({
   name: "pools.copy",
   input: copyInput,
   async run(context, { workspaceId, poolId, name }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change pools");
     const pool = await poolIn(context, workspaceId, poolId);
     const names = await namesOf(context.tx, poolId);
     return { poolId: await makePool(context, workspaceId, name, pool.currency, names, "pool.copied") };
@@ -64,7 +64,7 @@ const archive = defineCommand({
   name: "pools.archive",
   input: archiveInput,
   async run(context, { workspaceId, poolId, archived }) {
-    await asEditor(context, workspaceId);
+    await asEditor(context, workspaceId, "change pools");
     const { tx, now, record, emit } = context;
     await poolIn(context, workspaceId, poolId);
     await tx.pool.update({ where: { id: poolId }, data: { archivedAt: archived ? now : null } });
@@ -97,11 +97,6 @@ async function makePool(
   });
   await emit({ workspaceId, kind, payload: { poolId: id } });
   return id;
-}
-
-async function asEditor(context: QueryContext, workspaceId: string): Promise<void> {
-  const member = await context.member(workspaceId);
-  need(mayEdit(member), member.role, "change pools");
 }
 
 /** The pool, if it is the workspace's; locked when it is about to be written. */

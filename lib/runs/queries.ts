@@ -1,5 +1,6 @@
 import { dealIn } from "../deals/commands";
 import { type DealContent, dealInput } from "../deals/schema";
+import { peopleNames } from "../platform/accounts/peopleNames";
 import { notFound } from "../platform/errors";
 import { defineQuery } from "../platform/operation";
 import { runInput } from "./schema";
@@ -16,11 +17,10 @@ const list = defineQuery({
       orderBy: { number: "desc" },
       omit: { request: true, report: true },
     });
-    const people = await context.tx.user.findMany({
-      where: { id: { in: runs.map((run) => run.createdById) } },
-      select: { id: true, name: true },
-    });
-    const names = new Map(people.map((person) => [person.id, person.name]));
+    const nameOf = await peopleNames(
+      context.tx,
+      runs.map((run) => run.createdById),
+    );
     return {
       runs: runs.map((run) => ({
         id: run.id,
@@ -31,7 +31,7 @@ const list = defineQuery({
         engine: run.engine,
         note: run.note,
         milliseconds: run.milliseconds,
-        by: names.get(run.createdById) ?? "a former member",
+        by: nameOf(run.createdById),
         at: run.createdAt.toISOString(),
       })),
     };
