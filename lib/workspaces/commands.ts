@@ -1,8 +1,9 @@
-import { createHash, randomBytes, randomUUID } from "node:crypto";
+import { randomBytes, randomUUID } from "node:crypto";
 import { config } from "../platform/config";
 import { notFound, refuse } from "../platform/errors";
 import { sendMail } from "../platform/mail";
 import { type CommandContext, defineCommand } from "../platform/operation";
+import { hashOfToken, openInvitation } from "./invitations";
 import { mayManage, need } from "./policy";
 import {
   changeRoleInput,
@@ -16,10 +17,6 @@ import {
 } from "./schema";
 
 const INVITATION_DAYS = 7;
-
-export function hashOfToken(token: string): string {
-  return createHash("sha256").update(token).digest("hex");
-}
 
 const create = defineCommand({
   name: "workspaces.create",
@@ -135,10 +132,7 @@ const join = defineCommand({
   name: "workspaces.join",
   input: tokenInput,
   async run({ tx, actor, now, record, emit }, { token }) {
-    const invitation = await tx.invitation.findUnique({ where: { tokenHash: hashOfToken(token) } });
-    if (!invitation || invitation.status !== "pending" || invitation.expiresAt < now) {
-      throw refuse("notFound", "invitation", "This invitation is not open any more: ask for a new one.");
-    }
+    const invitation = await openInvitation({ tx, now }, token);
     const { workspaceId, role } = invitation;
     const isMember = await tx.member.findUnique({
       where: { workspaceId_userId: { workspaceId, userId: actor.userId } },

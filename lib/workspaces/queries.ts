@@ -1,7 +1,6 @@
 import { z } from "zod";
-import { refuse } from "../platform/errors";
 import { defineQuery } from "../platform/operation";
-import { hashOfToken } from "./commands";
+import { openInvitation } from "./invitations";
 import { mayOf } from "./policy";
 import { inWorkspace, tokenInput } from "./schema";
 
@@ -73,13 +72,7 @@ const invitation = defineQuery({
   name: "workspaces.invitation",
   input: tokenInput,
   async run({ tx, now }, { token }) {
-    const found = await tx.invitation.findUnique({
-      where: { tokenHash: hashOfToken(token) },
-      include: { workspace: true, inviter: true },
-    });
-    if (!found || found.status !== "pending" || found.expiresAt < now) {
-      throw refuse("notFound", "invitation", "This invitation is not open any more: ask for a new one.");
-    }
+    const found = await openInvitation({ tx, now }, token);
     return { workspace: found.workspace.name, role: found.role, inviter: found.inviter.name };
   },
 });
