@@ -32,7 +32,7 @@ export type DealReading =
   | { readonly ok: false; readonly problems: readonly Problem[] };
 
 /** A typed number with comma or point; undefined when empty, null when it is none. */
-function typedNumber(text: string): number | null | undefined {
+export function typedNumber(text: string): number | null | undefined {
   const plain = text
     .trim()
     .replace(/[\s\u202f\u00a0%]/g, "")

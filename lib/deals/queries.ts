@@ -8,7 +8,7 @@ import { mayOf } from "../workspaces/policy";
 import { inWorkspace } from "../workspaces/schema";
 import { dealIn } from "./commands";
 import { toRequest } from "./request";
-import { type DealContent, dealInput } from "./schema";
+import { type DealContent, dealInput, partsInput } from "./schema";
 
 const list = defineQuery({
   name: "deals.list",
@@ -138,6 +138,27 @@ const history = defineQuery({
   },
 });
 
+/** A pool and a market as a deal's request takes them, whether a deal links them yet or not. */
+const parts = defineQuery({
+  name: "deals.parts",
+  input: partsInput,
+  async run(context, { workspaceId, poolId, marketId }) {
+    await context.member(workspaceId);
+    return partsOf(context, workspaceId, poolId, marketId);
+  },
+});
+
+async function partsOf(context: QueryContext, workspaceId: string, poolId: string, marketId: string) {
+  const pool = await poolIn(context, workspaceId, poolId);
+  const market = await marketIn(context, workspaceId, marketId);
+  return {
+    currency: pool.currency,
+    names: await namesOf(context.tx, poolId),
+    pricingDate: market.pricingDate,
+    market: market.content as MarketContent,
+  };
+}
+
 /** The request that pricing the deal now would make. */
 const request = defineQuery({
   name: "deals.request",
@@ -150,17 +171,9 @@ const request = defineQuery({
 
 export async function requestOfDeal(context: QueryContext, workspaceId: string, dealId: string) {
   const deal = await dealIn(context, workspaceId, dealId);
-  const pool = await poolIn(context, workspaceId, deal.poolId);
-  const market = await marketIn(context, workspaceId, deal.marketId);
-  const names = await namesOf(context.tx, deal.poolId);
-  const parts = {
-    content: deal.content as DealContent,
-    currency: pool.currency,
-    names,
-    pricingDate: market.pricingDate,
-    market: market.content as MarketContent,
-  };
-  return { request: toRequest(parts), version: deal.version };
+  const linked = await partsOf(context, workspaceId, deal.poolId, deal.marketId);
+  const request = toRequest({ ...linked, content: deal.content as DealContent });
+  return { request, version: deal.version };
 }
 
-export const queries = { list, open, history, request };
+export const queries = { list, open, history, parts, request };

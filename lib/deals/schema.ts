@@ -34,6 +34,7 @@ const links = {
   marketId: z.string().min(1, "Choose a market.").max(100),
 };
 
+export const partsInput = inWorkspace.extend(links);
 export const createInput = inWorkspace.extend({ name: dealName, ...links, content: dealContent });
 export const dealInput = inWorkspace.extend({ dealId: z.string().min(1).max(100) });
 export const saveInput = dealInput.extend({

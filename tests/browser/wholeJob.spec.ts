@@ -110,16 +110,19 @@ test("a structurer imports a pool, sets classes, prices and saves a run; an anal
   await analyst.goto(run);
   await expect(analyst.getByRole("row", { name: /Hull/ })).toBeVisible();
   await structurer.goto(deal);
+  await look(structurer, "deal");
+  await structurer.getByRole("link", { name: "Talk" }).click();
   await expect(structurer.getByRole("heading", { name: "Talk" })).toBeVisible();
   await analyst.goto(deal);
   await expect(analyst.getByText("You can read this deal, not change it.")).toBeVisible();
+  await analyst.getByRole("link", { name: "Talk" }).click();
   await analyst
     .getByLabel("New thread")
     .fill("Is the keel's coupon enough?\nSee https://example.invalid/note");
   await analyst.getByRole("button", { name: "Post" }).click();
   await expect(analyst.getByText("Is the keel's coupon enough?")).toBeVisible();
   await expect(structurer.getByText("Is the keel's coupon enough?")).toBeVisible({ timeout: 5_000 });
-  await look(structurer, "deal");
+  await look(structurer, "talk");
 });
 
 test("an unknown address, another workspace and a signed-out visit each lead to a page that says so", async ({

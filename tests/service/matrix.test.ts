@@ -153,6 +153,10 @@ const rows: Record<string, Row> = {
   "deals.list": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
   "deals.open": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
   "deals.history": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "deals.parts": {
+    expected: everyone,
+    input: ({ workspaceId, poolId, marketId }) => ({ workspaceId, poolId, marketId }),
+  },
   "deals.request": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
   "runs.price": {
     expected: workers,

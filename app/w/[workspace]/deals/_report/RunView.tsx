@@ -8,6 +8,7 @@ import type { FigureUnit } from "@/app/_ui/figures";
 import { saveFile } from "@/app/_ui/saveFile";
 import type { Operations } from "@/lib/operations";
 import { Hull } from "../_desk/Hull";
+import { dealPath } from "../_frame/rooms";
 import { ClassesTable } from "./ClassesTable";
 
 const LossLawChart = dynamic(() => import("./LossLawChart").then((module) => module.LossLawChart), {
@@ -50,8 +51,8 @@ export function RunView({
     <Stack gap="lg">
       <Group justify="space-between">
         <div>
-          <Link href={`/w/${workspaceId}/deals/${deal.id}`}>{deal.name}</Link>
-          <Title order={1}>Run {run.number}</Title>
+          <Link href={dealPath(workspaceId, deal.id, "runs")}>All runs</Link>
+          <Title order={2}>Run {run.number}</Title>
           <Text c="dimmed" size="sm">
             Version {run.dealVersion} of the deal
             {run.dealVersion === deal.version ? "" : ", which has changed since"};{" "}

@@ -1,0 +1,34 @@
+import { Stack } from "@mantine/core";
+import type { ReactNode } from "react";
+import { ask } from "@/app/_ui/ask";
+import { queries as deals } from "@/lib/deals/queries";
+import { DealFrame } from "../_frame/DealFrame";
+import { DealHeader } from "../_frame/DealHeader";
+import { LivePage } from "./LivePage";
+
+/** The frame of a deal's desk: its head, its rooms, and the live connection. */
+export default async function DealLayout({
+  children,
+  params,
+}: {
+  children: ReactNode;
+  params: Promise<{ workspace: string; deal: string }>;
+}) {
+  const { workspace: workspaceId, deal: dealId } = await params;
+  const deal = await ask(deals.open, { workspaceId, dealId });
+  return (
+    <DealFrame
+      workspaceId={workspaceId}
+      deal={deal}
+      mayEdit={deal.may.edit && !deal.isArchived}
+      pools={deal.pools}
+      markets={deal.markets}
+    >
+      <LivePage workspaceId={workspaceId} dealId={dealId} />
+      <DealHeader />
+      <Stack gap="lg" mt="md">
+        {children}
+      </Stack>
+    </DealFrame>
+  );
+}

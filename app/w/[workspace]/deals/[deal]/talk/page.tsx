@@ -1,0 +1,11 @@
+import { ask } from "@/app/_ui/ask";
+import { queries as discussion } from "@/lib/discussion/queries";
+import { Talk } from "../Talk";
+
+export const metadata = { title: "Talk" };
+
+export default async function Page({ params }: { params: Promise<{ workspace: string; deal: string }> }) {
+  const { workspace: workspaceId, deal: dealId } = await params;
+  const talk = await ask(discussion.list, { workspaceId, dealId });
+  return <Talk workspaceId={workspaceId} dealId={dealId} talk={talk} />;
+}

@@ -1,0 +1,13 @@
+/** The rooms of a deal's desk, in the order of their tabs. `slug` is the room's part of the address. */
+export const rooms = [
+  { slug: "", label: "Structure" },
+  { slug: "runs", label: "Runs" },
+  { slug: "talk", label: "Talk" },
+] as const satisfies readonly { slug: string; label: string }[];
+
+export type Room = (typeof rooms)[number];
+
+/** The address of a deal, or of one of its rooms. */
+export function dealPath(workspaceId: string, dealId: string, slug = ""): string {
+  return `/w/${workspaceId}/deals/${dealId}${slug ? `/${slug}` : ""}`;
+}
