@@ -1,6 +1,6 @@
 import { allDigits, type FigureUnit, fourDigits } from "./figures";
 
-/** A figure: four significant digits on screen, all of them on hover; a dash with its reason where there is none. */
+/** A figure: four significant digits on screen, all of them on hover and copy; a dash with its reason where there is none. */
 export function Figure({
   value,
   unit = "plain",
@@ -11,8 +11,9 @@ export function Figure({
   otherwise?: string;
 }) {
   if (value === null) return <span title={otherwise}>—</span>;
+  const full = allDigits(value, unit);
   return (
-    <span className="figure" title={allDigits(value, unit)}>
+    <span className="figure" title={full} data-full={full}>
       {fourDigits(value, unit)}
     </span>
   );

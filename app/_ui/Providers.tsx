@@ -2,6 +2,7 @@
 
 import { createTheme, MantineProvider } from "@mantine/core";
 import type { ReactNode } from "react";
+import { CopyFigures } from "./CopyFigures";
 
 const theme = createTheme({
   primaryColor: "teal",
@@ -15,6 +16,7 @@ const theme = createTheme({
 export function Providers({ children }: { children: ReactNode }) {
   return (
     <MantineProvider theme={theme} defaultColorScheme="auto">
+      <CopyFigures />
       {children}
     </MantineProvider>
   );

@@ -1,7 +1,8 @@
 import fc from "fast-check";
 import Papa from "papaparse";
 import { describe, expect, it } from "vitest";
-import { poolCsv, safeCell, toCsv } from "@/lib/pools/export";
+import { safeCell, toCsv } from "@/lib/platform/csv";
+import { poolCsv } from "@/lib/pools/export";
 import { readPool } from "@/lib/pools/import/read";
 import type { NameInput } from "@/lib/pricing/request";
 

@@ -1,4 +1,4 @@
-import { plainCell } from "../export";
+import { plainCell } from "../../platform/csv";
 import type { ColumnField, ColumnReading } from "./columns";
 import { inUnit, isBlank, readNumber } from "./numbers";
 import type { TableRow } from "./table";

@@ -1,4 +1,4 @@
-import { toCsv } from "../export";
+import { toCsv } from "../../platform/csv";
 import type { ImportReading } from "./read";
 
 /** The rows that were not taken, as they stood in the file, with the reasons in a last column. */
