@@ -29,6 +29,7 @@ export function FigureTable<Row>({
   keyOf,
   hiddenAtFirst = [],
   cellOf,
+  actions,
   minWidth = 640,
   tools,
 }: {
@@ -39,6 +40,8 @@ export function FigureTable<Row>({
   hiddenAtFirst?: readonly string[];
   /** A cell of the screen's own for some column, in place of the figure. */
   cellOf?(column: FigureColumn<Row>, row: Row): ReactNode | undefined;
+  /** What can be done with a row, in a last column. */
+  actions?: ((row: Row) => ReactNode) | undefined;
   minWidth?: number;
   tools?: ReactNode;
 }) {
@@ -99,6 +102,7 @@ export function FigureTable<Row>({
                   </Table.Th>
                 );
               })}
+              {actions && <Table.Th aria-label="What can be done" className="screenOnly" />}
             </Table.Tr>
           </Table.Thead>
           <Table.Tbody>
@@ -109,6 +113,7 @@ export function FigureTable<Row>({
                     {cellOf?.(column, row) ?? <Cell column={column} row={row} />}
                   </Table.Td>
                 ))}
+                {actions && <Table.Td className="screenOnly">{actions(row)}</Table.Td>}
               </Table.Tr>
             ))}
           </Table.Tbody>

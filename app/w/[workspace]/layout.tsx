@@ -17,7 +17,7 @@ export default async function WorkspaceLayout({
   return (
     <>
       <WorkspaceBar workspaceId={workspace} name={name} role={role} person={actor.name} />
-      <Container size="xl" py="md" component="main">
+      <Container fluid maw={1760} py="md" component="main">
         {children}
         <Text component="footer" size="xs" c="dimmed" mt="xl">
           Figures come from a model whose copula has no dynamics and which the market has broken before. They

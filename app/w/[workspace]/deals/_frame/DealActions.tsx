@@ -8,7 +8,7 @@ import { Problems } from "@/app/_ui/Problems";
 import type { Problem } from "@/lib/platform/errors";
 import { useDeal } from "./dealContext";
 import styles from "./frame.module.css";
-import { dealPath } from "./rooms";
+import { roomAddress } from "./rooms";
 
 interface Refused {
   readonly title: string;
@@ -33,14 +33,14 @@ export function DealActions() {
     setPricing(true);
     const answer = await call("runs.price", { workspaceId, dealId: deal.id, version, note });
     setPricing(false);
-    if (answer.ok) router.push(dealPath(workspaceId, deal.id, `runs/${answer.output.runId}`));
+    if (answer.ok) router.push(roomAddress(workspaceId, deal.id, `runs/${answer.output.runId}`));
     else setRefused({ title: "Nothing was priced", problems: answer.problems });
   };
   const copy = async () => {
     if (!deal) return;
     const name = `${deal.name} (copy)`.slice(0, 120);
     const answer = await call("deals.copy", { workspaceId, dealId: deal.id, name });
-    if (answer.ok) router.push(dealPath(workspaceId, answer.output.dealId));
+    if (answer.ok) router.push(roomAddress(workspaceId, answer.output.dealId));
     else setRefused({ title: "The deal was not copied", problems: answer.problems });
   };
   const archive = async () => {

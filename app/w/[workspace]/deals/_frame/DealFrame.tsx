@@ -9,7 +9,7 @@ import type { Problem } from "@/lib/platform/errors";
 import type { NameInput } from "@/lib/pricing/request";
 import { blankDeal } from "./blankDeal";
 import { type DealAtHand, DealContext, type MarketChoice, type OpenDeal } from "./dealContext";
-import { dealPath } from "./rooms";
+import { roomAddress } from "./rooms";
 import { useDraft } from "./useDraft";
 import { useParts } from "./useParts";
 
@@ -76,7 +76,7 @@ export function DealFrame({
       return null;
     }
     draft.settle();
-    if ("dealId" in answer.output) router.push(dealPath(workspaceId, answer.output.dealId));
+    if ("dealId" in answer.output) router.push(roomAddress(workspaceId, answer.output.dealId));
     router.refresh();
     return "version" in answer.output ? answer.output.version : 1;
   };

@@ -8,6 +8,6 @@ export const rooms = [
 export type Room = (typeof rooms)[number];
 
 /** The address of a deal, or of one of its rooms. */
-export function dealPath(workspaceId: string, dealId: string, slug = ""): string {
+export function roomAddress(workspaceId: string, dealId: string, slug = ""): string {
   return `/w/${workspaceId}/deals/${dealId}${slug ? `/${slug}` : ""}`;
 }

@@ -6,17 +6,19 @@ import Link from "next/link";
 import { Figure } from "@/app/_ui/Figure";
 import type { FigureUnit } from "@/app/_ui/figures";
 import { saveFile } from "@/app/_ui/saveFile";
+import { type ClassText, textOf } from "@/lib/deals/form";
 import type { Operations } from "@/lib/operations";
-import { Hull } from "../_desk/Hull";
-import { dealPath } from "../_frame/rooms";
-import { ClassesTable } from "./ClassesTable";
+import type { PricingReport, TrancheReport } from "@/lib/pricing/report";
+import { roomAddress } from "../_frame/rooms";
+import { Hull } from "../_structure/hull/Hull";
+import { waterLine } from "../_structure/hull/law";
+import { ReportClasses } from "./ReportClasses";
 
-const LossLawChart = dynamic(() => import("./LossLawChart").then((module) => module.LossLawChart), {
-  ssr: false,
-});
 const TimelineChart = dynamic(() => import("./TimelineChart").then((module) => module.TimelineChart), {
   ssr: false,
 });
+
+const LEVELS = [0.95, 0.99, 0.999];
 
 type Run = Operations["runs.open"]["output"];
 
@@ -42,16 +44,11 @@ export function RunView({
     ["Realised loss", report.pool.realisedLoss, "percent", "% of notional"],
     ["Loss unit", report.pool.unit, "percent", "% of notional"],
   ];
-  const marks = report.tranches.map((tranche) => ({
-    name: nameOf(tranche.id),
-    attachment: tranche.attachment,
-    detachment: tranche.detachment,
-  }));
   return (
     <Stack gap="lg">
       <Group justify="space-between">
         <div>
-          <Link href={dealPath(workspaceId, deal.id, "runs")}>All runs</Link>
+          <Link href={roomAddress(workspaceId, deal.id, "runs")}>All runs</Link>
           <Title order={2}>Run {run.number}</Title>
           <Text c="dimmed" size="sm">
             Version {run.dealVersion} of the deal
@@ -93,20 +90,23 @@ export function RunView({
         ))}
       </SimpleGrid>
       {report.tranches.length > 0 && (
-        <ClassesTable tranches={report.tranches} nameOf={nameOf} currency={request.currency ?? "EUR"} />
+        <Hull
+          classes={report.tranches.map((tranche) => classText(tranche, nameOf(tranche.id)))}
+          law={report.lossLaw}
+          levels={LEVELS}
+          reach={usualReach(report)}
+          lawView="mass"
+        />
       )}
-      <SimpleGrid cols={{ base: 1, md: 2 }}>
-        {report.tranches.length > 0 && (
-          <Hull classes={report.tranches.map((tranche) => ({ ...tranche, name: nameOf(tranche.id) }))} />
-        )}
-        {report.lossLaw && <LossLawChart law={report.lossLaw} marks={marks} />}
-        {report.timeline && (
-          <TimelineChart
-            timeline={report.timeline}
-            names={report.tranches.map((tranche) => nameOf(tranche.id))}
-          />
-        )}
-      </SimpleGrid>
+      {report.tranches.length > 0 && (
+        <ReportClasses report={report} nameOf={nameOf} currency={request.currency ?? "EUR"} />
+      )}
+      {report.timeline && report.tranches.length > 0 && (
+        <TimelineChart
+          timeline={report.timeline}
+          names={report.tranches.map((tranche) => nameOf(tranche.id))}
+        />
+      )}
       {report.nthToDefault.length > 0 && (
         <Table.ScrollContainer minWidth={480}>
           <Table>
@@ -156,4 +156,27 @@ export function RunView({
       </Text>
     </Stack>
   );
+}
+
+/** A priced class as the hull takes it: strikes in percent. */
+function classText({ id, attachment, detachment }: TrancheReport, name: string): ClassText {
+  const percent = (strike: number) => textOf(strike, 100);
+  return {
+    key: id,
+    id,
+    name,
+    attachment: percent(attachment),
+    detachment: percent(detachment),
+    running: "",
+    upfront: "",
+  };
+}
+
+function usualReach({ tranches, lossLaw }: PricingReport): number {
+  const strikes = tranches.flatMap(({ attachment, detachment }) => [
+    attachment,
+    detachment < 1 ? detachment : 0,
+  ]);
+  const lines = lossLaw ? LEVELS.map((level) => waterLine(lossLaw, level)) : [];
+  return Math.min(1, 1.12 * Math.max(0.02, ...strikes, ...lines));
 }

@@ -1,26 +1,49 @@
 "use client";
 
-import { Textarea, TextInput } from "@mantine/core";
+import { Alert, Grid, Text, Textarea, TextInput } from "@mantine/core";
 import { Problems } from "@/app/_ui/Problems";
-import { ClassesEditor } from "../_desk/ClassesEditor";
-import { Hull } from "../_desk/Hull";
+import { usePriced } from "@/app/_ui/usePriced";
+import { dealPath } from "@/lib/deals/check";
 import { useDeal } from "../_frame/dealContext";
+import { ClassTable } from "./ClassTable";
+import { HullRoom } from "./HullRoom";
+import { Income } from "./Income";
 import { Terms } from "./Terms";
 
-/** The room of the capital structure. */
+/** The room of the capital structure: terms, hull and law, classes with figures that follow what is typed. */
 export function Structure() {
-  const { form, change, mayEdit, reading, problems, refused, problemAt } = useDeal();
+  const { form, change, mayEdit, problems, refused, problemAt, request, parts, isDirty } = useDeal();
+  const priced = usePriced(request);
+  const { report } = priced;
+  const engineProblems = priced.problems.map((problem) => ({ ...problem, path: dealPath(problem.path) }));
   return (
     <>
       <Terms />
-      <ClassesEditor
-        classes={form.classes}
-        isReadOnly={!mayEdit}
-        problemAt={problemAt}
-        onChange={(classes) => change({ classes })}
-      />
-      {reading.ok && reading.content.classes.length > 0 && <Hull classes={reading.content.classes} />}
+      <Grid gap="md">
+        <Grid.Col span={{ base: 12, lg: 9 }}>
+          <HullRoom law={report?.lossLaw} />
+        </Grid.Col>
+        <Grid.Col span={{ base: 12, lg: 3 }}>
+          {report && priced.of && <Income report={report} request={priced.of} />}
+          <Text size="sm" c="dimmed" mt="xs" role="status">
+            {statusWords(priced.isBusy, priced.milliseconds, isDirty, request !== null)}
+          </Text>
+          {report && report.warnings.length > 0 && (
+            <Alert color="yellow" title="Warnings" mt="xs">
+              {report.warnings.map((warning) => (
+                <Text size="sm" key={`${warning.code} ${warning.subject}`}>
+                  {warning.message}
+                </Text>
+              ))}
+            </Alert>
+          )}
+        </Grid.Col>
+      </Grid>
+      <ClassTable tranches={report?.tranches ?? []} currency={parts?.currency ?? "EUR"} />
+      {refused.length === 0 && <Problems title="Before it can be saved" problems={problems} />}
+      <Problems title="Why there are no new figures" problems={problems.length > 0 ? [] : engineProblems} />
       <TextInput
+        size="xs"
         label="n-th-to-default contracts"
         placeholder="1, 2, 3"
         disabled={!mayEdit}
@@ -29,6 +52,7 @@ export function Structure() {
         onChange={(event) => change({ nthToDefault: event.currentTarget.value }, "nthToDefault")}
       />
       <Textarea
+        size="xs"
         label="Notes"
         autosize
         minRows={2}
@@ -37,7 +61,19 @@ export function Structure() {
         error={problemAt("content.notes")}
         onChange={(event) => change({ notes: event.currentTarget.value }, "notes")}
       />
-      {refused.length === 0 && <Problems title="Before it can be saved" problems={problems} />}
     </>
   );
+}
+
+function statusWords(
+  isBusy: boolean,
+  milliseconds: number | null,
+  isDirty: boolean,
+  isReady: boolean,
+): string {
+  if (!isReady) return "Figures follow once the deal reads without a problem.";
+  if (isBusy) return "Pricing what is on screen…";
+  if (milliseconds === null) return "";
+  const what = isDirty ? "what is typed, not saved" : "the saved deal";
+  return `Figures of ${what}, priced in this browser in ${milliseconds} ms. A run keeps them.`;
 }

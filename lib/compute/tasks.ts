@@ -1,0 +1,23 @@
+import { answer } from "./answer";
+import type { PricingAnswer } from "./protocol";
+
+/** What a browser's worker can be asked for: each a pure function of its input. */
+export const tasks = {
+  price: (request: unknown): PricingAnswer => answer({ request }),
+};
+
+export type TaskKind = keyof typeof tasks;
+export type TaskInput<Kind extends TaskKind> = Parameters<(typeof tasks)[Kind]>[0];
+export type TaskOutput<Kind extends TaskKind> = ReturnType<(typeof tasks)[Kind]>;
+
+/** A task as sent to a worker. */
+export interface TaskMessage {
+  readonly id: number;
+  readonly kind: TaskKind;
+  readonly input: unknown;
+}
+
+/** Its answer: the output, or what went wrong in the engine itself (never a refusal: those are outputs). */
+export type TaskAnswer =
+  | { readonly id: number; readonly ok: true; readonly output: unknown }
+  | { readonly id: number; readonly ok: false; readonly message: string };
