@@ -1,21 +1,20 @@
 import { marketIn } from "../markets/commands";
 import type { MarketContent } from "../markets/schema";
 import { peopleNames } from "../platform/accounts/peopleNames";
-import { defineQuery, type QueryContext } from "../platform/operation";
+import { defineQuery } from "../platform/operation";
 import { poolIn } from "../pools/commands";
-import { namesOf } from "../pools/names";
 import { mayOf } from "../workspaces/policy";
 import { inWorkspace } from "../workspaces/schema";
 import { dealIn } from "./commands";
-import { toRequest } from "./request";
+import { currentHash, partsOf, requestOfDeal } from "./current";
 import { type DealContent, dealInput, partsInput } from "./schema";
 
 const list = defineQuery({
   name: "deals.list",
   input: inWorkspace,
-  async run({ tx, member }, { workspaceId }) {
-    const may = mayOf(await member(workspaceId));
-    const deals = await tx.deal.findMany({
+  async run(context, { workspaceId }) {
+    const may = mayOf(await context.member(workspaceId));
+    const deals = await context.tx.deal.findMany({
       where: { workspaceId },
       orderBy: { updatedAt: "desc" },
       include: {
@@ -24,10 +23,13 @@ const list = defineQuery({
         runs: {
           orderBy: { number: "desc" },
           take: 1,
-          select: { number: true, createdAt: true, dealVersion: true },
+          select: { number: true, createdAt: true, requestHash: true },
         },
       },
     });
+    const hashes = new Map<string, string>();
+    for (const { id, runs } of deals)
+      if (runs.length > 0) hashes.set(id, await currentHash(context, workspaceId, id));
     return {
       may,
       deals: deals.map(({ id, name, pool, market, content, version, archivedAt, updatedAt, runs }) => ({
@@ -44,7 +46,7 @@ const list = defineQuery({
           ? {
               number: runs[0].number,
               at: runs[0].createdAt.toISOString(),
-              isCurrent: runs[0].dealVersion === version,
+              isCurrent: runs[0].requestHash === hashes.get(id),
             }
           : null,
       })),
@@ -148,17 +150,6 @@ const parts = defineQuery({
   },
 });
 
-async function partsOf(context: QueryContext, workspaceId: string, poolId: string, marketId: string) {
-  const pool = await poolIn(context, workspaceId, poolId);
-  const market = await marketIn(context, workspaceId, marketId);
-  return {
-    currency: pool.currency,
-    names: await namesOf(context.tx, poolId),
-    pricingDate: market.pricingDate,
-    market: market.content as MarketContent,
-  };
-}
-
 /** The request that pricing the deal now would make. */
 const request = defineQuery({
   name: "deals.request",
@@ -168,12 +159,5 @@ const request = defineQuery({
     return requestOfDeal(context, workspaceId, dealId);
   },
 });
-
-export async function requestOfDeal(context: QueryContext, workspaceId: string, dealId: string) {
-  const deal = await dealIn(context, workspaceId, dealId);
-  const linked = await partsOf(context, workspaceId, deal.poolId, deal.marketId);
-  const request = toRequest({ ...linked, content: deal.content as DealContent });
-  return { request, version: deal.version };
-}
 
 export const queries = { list, open, history, parts, request };

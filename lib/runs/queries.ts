@@ -1,4 +1,5 @@
 import { dealIn } from "../deals/commands";
+import { currentHash } from "../deals/current";
 import { type DealContent, dealInput } from "../deals/schema";
 import { peopleNames } from "../platform/accounts/peopleNames";
 import { notFound } from "../platform/errors";
@@ -11,7 +12,8 @@ const list = defineQuery({
   input: dealInput,
   async run(context, { workspaceId, dealId }) {
     await context.member(workspaceId);
-    const deal = await dealIn(context, workspaceId, dealId);
+    await dealIn(context, workspaceId, dealId);
+    const hash = await currentHash(context, workspaceId, dealId);
     const runs = await context.tx.run.findMany({
       where: { dealId },
       orderBy: { number: "desc" },
@@ -26,7 +28,7 @@ const list = defineQuery({
         id: run.id,
         number: run.number,
         dealVersion: run.dealVersion,
-        isCurrent: run.dealVersion === deal.version,
+        isCurrent: run.requestHash === hash,
         requestHash: run.requestHash,
         engine: run.engine,
         note: run.note,
@@ -41,7 +43,8 @@ const list = defineQuery({
 const open = defineQuery({
   name: "runs.open",
   input: runInput,
-  async run({ tx, member }, { workspaceId, runId }) {
+  async run(context, { workspaceId, runId }) {
+    const { tx, member } = context;
     await member(workspaceId);
     const run = await tx.run.findFirst({ where: { id: runId, workspaceId } });
     if (!run) throw notFound("run");
@@ -57,6 +60,7 @@ const open = defineQuery({
       number: run.number,
       dealVersion: run.dealVersion,
       requestHash: run.requestHash,
+      isCurrent: run.requestHash === (await currentHash(context, workspaceId, run.dealId)),
       engine: run.engine,
       note: run.note,
       at: run.createdAt.toISOString(),

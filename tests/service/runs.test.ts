@@ -6,6 +6,8 @@ import { commands as discussion } from "@/lib/discussion/commands";
 import { queries as discussionQueries } from "@/lib/discussion/queries";
 import { checkSignIn, countFailure } from "@/lib/platform/accounts/signInLimit";
 import { execute } from "@/lib/platform/run";
+import { commands as pools } from "@/lib/pools/commands";
+import { queries as poolQueries } from "@/lib/pools/queries";
 import { requestHash } from "@/lib/pricing/canonical";
 import { price } from "@/lib/pricing/price";
 import { commands as runs } from "@/lib/runs/commands";
@@ -44,6 +46,30 @@ describe("runs", () => {
     expect(again.ok && JSON.stringify(again.report)).toBe(JSON.stringify(run.report));
   });
 
+  it("stand for the deal while its request has their hash: notes change nothing, a changed pool does, and changing it back undoes it", async () => {
+    const { workspaceId, dealId, poolId, marketId } = world;
+    const isCurrent = async () => {
+      const { runs: list } = await execute(runQueries.list, { workspaceId, dealId }, as("viewer"));
+      return list.at(-1)?.isCurrent;
+    };
+    const pool = await execute(poolQueries.open, { workspaceId, poolId }, as("owner"));
+    const { name, currency, names } = pool;
+    const savePool = (version: number, changed: typeof names) =>
+      execute(pools.save, { workspaceId, poolId, version, name, currency, names: changed }, as("owner"));
+    expect(await isCurrent()).toBe(true);
+    const content = { ...aDealContent, notes: "a remark" };
+    await execute(
+      deals.save,
+      { workspaceId, dealId, version: 1, name: "Deal", poolId, marketId, content },
+      as("owner"),
+    );
+    expect(await isCurrent()).toBe(true);
+    await savePool(1, [{ ...names[0]!, recovery: 0.1 }, ...names.slice(1)]);
+    expect(await isCurrent()).toBe(false);
+    await savePool(2, names);
+    expect(await isCurrent()).toBe(true);
+  });
+
   it("refuse a version that is not the saved one", async () => {
     const { workspaceId, dealId } = world;
     await expect(execute(runs.price, { workspaceId, dealId, version: 9 }, as("owner"))).rejects.toMatchObject(
@@ -63,11 +89,11 @@ describe("deals", () => {
       name: "Deal",
       content: { ...aDealContent, notes: "mine" },
     };
-    await execute(deals.save, { ...fields, version: 1 }, as("structurer"));
-    const refusal = execute(deals.save, { ...fields, version: 1 }, as("owner"));
-    await expect(refusal).rejects.toMatchObject({ kind: "conflict", current: { version: 2 } });
+    await execute(deals.save, { ...fields, version: 2 }, as("structurer"));
+    const refusal = execute(deals.save, { ...fields, version: 2 }, as("owner"));
+    await expect(refusal).rejects.toMatchObject({ kind: "conflict", current: { version: 3 } });
     const { versions } = await execute(dealQueries.history, { workspaceId, dealId }, as("viewer"));
-    expect(versions.map((row) => row.version)).toEqual([2, 1]);
+    expect(versions.map((row) => row.version)).toEqual([3, 2, 1]);
   });
 
   it("refuse overlapping classes and a wrong correlation, all at once, beside their fields", async () => {

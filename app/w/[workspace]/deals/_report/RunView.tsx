@@ -30,7 +30,7 @@ export function RunView({
   classNames,
 }: {
   workspaceId: string;
-  deal: { id: string; name: string; version: number };
+  deal: { id: string; name: string };
   run: Run;
   classNames: Readonly<Record<string, string>>;
 }) {
@@ -52,7 +52,7 @@ export function RunView({
           <Title order={2}>Run {run.number}</Title>
           <Text c="dimmed" size="sm">
             Version {run.dealVersion} of the deal
-            {run.dealVersion === deal.version ? "" : ", which has changed since"};{" "}
+            {run.isCurrent ? "" : "; the deal, its pool or its market has changed since"};{" "}
             {run.at.slice(0, 16).replace("T", " ")} UTC; {run.engine}; request{" "}
             <code title={run.requestHash}>{run.requestHash.slice(0, 12)}</code>
             {run.note && `; ${run.note}`}

@@ -16,7 +16,7 @@ export default async function Page({
   return (
     <RunView
       workspaceId={workspaceId}
-      deal={{ id: deal.id, name: deal.name, version: deal.version }}
+      deal={{ id: deal.id, name: deal.name }}
       run={run}
       classNames={run.classNames}
     />

@@ -1,0 +1,60 @@
+import { marketIn } from "../markets/commands";
+import type { MarketContent } from "../markets/schema";
+import type { QueryContext } from "../platform/operation";
+import { poolIn } from "../pools/commands";
+import { namesOf } from "../pools/names";
+import { requestHash } from "../pricing/canonical";
+import { dealIn } from "./commands";
+import { toRequest } from "./request";
+import type { DealContent } from "./schema";
+
+const MOST_KEPT = 2_000;
+const kept = new Map<string, string>();
+
+/**
+ * The hash of the request that pricing the deal now would make: it tells whether a run still stands for the deal, changes of
+ * its pool and market included. Remembered for the versions it was made of.
+ */
+export async function currentHash(
+  context: QueryContext,
+  workspaceId: string,
+  dealId: string,
+): Promise<string> {
+  const deal = await context.tx.deal.findUniqueOrThrow({
+    where: { id: dealId },
+    select: {
+      version: true,
+      pool: { select: { id: true, version: true } },
+      market: { select: { id: true, version: true } },
+    },
+  });
+  const { version, pool, market } = deal;
+  const key = [dealId, version, pool.id, pool.version, market.id, market.version].join(" ");
+  const known = kept.get(key);
+  if (known !== undefined) return known;
+  const { request } = await requestOfDeal(context, workspaceId, dealId);
+  const hash = requestHash(request);
+  if (kept.size >= MOST_KEPT) kept.clear();
+  kept.set(key, hash);
+  return hash;
+}
+
+/** A pool and a market of the workspace, as a request takes them. */
+export async function partsOf(context: QueryContext, workspaceId: string, poolId: string, marketId: string) {
+  const pool = await poolIn(context, workspaceId, poolId);
+  const market = await marketIn(context, workspaceId, marketId);
+  return {
+    currency: pool.currency,
+    names: await namesOf(context.tx, poolId),
+    pricingDate: market.pricingDate,
+    market: market.content as MarketContent,
+  };
+}
+
+/** The request that pricing the deal now would make, and the version it is of. */
+export async function requestOfDeal(context: QueryContext, workspaceId: string, dealId: string) {
+  const deal = await dealIn(context, workspaceId, dealId);
+  const linked = await partsOf(context, workspaceId, deal.poolId, deal.marketId);
+  const request = toRequest({ ...linked, content: deal.content as DealContent });
+  return { request, version: deal.version };
+}
