@@ -11,6 +11,9 @@ export type Answer<Output> =
       readonly current: unknown;
     };
 
+/** The page's event that an operation was refused because the session has ended. */
+export const SIGNED_OUT = "loadline signed out";
+
 /** Runs an operation on the server by its name. Never throws: a lost connection is an answer too, with status 0. */
 export async function call<Name extends keyof Operations>(
   name: Name,
@@ -24,6 +27,7 @@ export async function call<Name extends keyof Operations>(
     });
     const body = await response.json();
     if (response.ok) return { ok: true, output: body };
+    if (response.status === 401) window.dispatchEvent(new Event(SIGNED_OUT));
     return { ok: false, status: response.status, problems: body.errors ?? [], current: body.current };
   } catch {
     const message = "The server cannot be reached: nothing was lost here. Try again in a moment.";

@@ -2,6 +2,7 @@ import { Container, Text } from "@mantine/core";
 import type { ReactNode } from "react";
 import { ask } from "@/app/_ui/ask";
 import { queries } from "@/lib/workspaces/queries";
+import { Live } from "./_live/Live";
 import { WorkspaceBar } from "./WorkspaceBar";
 
 /** The frame of every screen of a workspace. */
@@ -18,7 +19,7 @@ export default async function WorkspaceLayout({
     <>
       <WorkspaceBar workspaceId={workspace} name={name} role={role} person={actor.name} />
       <Container fluid maw={1760} py="md" component="main">
-        {children}
+        <Live workspaceId={workspace}>{children}</Live>
         <Text component="footer" size="xs" c="dimmed" mt="xl">
           Figures come from a model whose copula has no dynamics and which the market has broken before. They
           are an aid to judgement, not advice or a price anyone must honour; use is subject to the firm's own

@@ -4,7 +4,6 @@ import { ask } from "@/app/_ui/ask";
 import { queries as deals } from "@/lib/deals/queries";
 import { DealFrame } from "../_frame/DealFrame";
 import { DealHeader } from "../_frame/DealHeader";
-import { LivePage } from "./LivePage";
 
 /** The frame of a deal's desk: its head, its rooms, and the live connection. */
 export default async function DealLayout({
@@ -24,7 +23,6 @@ export default async function DealLayout({
       pools={deal.pools}
       markets={deal.markets}
     >
-      <LivePage workspaceId={workspaceId} dealId={dealId} />
       <DealHeader />
       <Stack gap="lg" mt="md">
         {children}
