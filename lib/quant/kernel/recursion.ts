@@ -1,104 +1,194 @@
-import type { AmountGrid } from "../portfolio/amountGrid";
+import { type RecursionBackend, recursionBackend } from "./backend";
+import { FREE_MEMORY, NORMAL_TABLE } from "./normalTable";
 
-/** Conditional mass below this is dropped at both ends: far below any figure, far above the subnormal numbers. */
-const NEGLIGIBLE = 1e-30;
+/** Factor values worked out in one call. */
+export const PANEL_POINTS = 16;
+const LANES = 4;
+
+/** Names on a grid and in a one-factor model, as flat arrays. */
+export interface RecursionNames {
+  /** Whole steps of each name's first landing point. */
+  readonly steps: Int32Array;
+  /** Three landing weights a name, at steps, steps + 1, steps + 2. */
+  readonly weights: Float64Array;
+  /** Amount of each name in steps, not whole in general. */
+  readonly sizes: Float64Array;
+  /** c_i/√(1 − a_i²) and a_i/√(1 − a_i²): p_i(m) = Φ(scaled − slope · m). */
+  readonly scaled: Float64Array;
+  readonly slopes: Float64Array;
+}
+
+/** How far the law goes and where it is taken apart. */
+export interface RecursionShape {
+  /** Highest step kept; mass above goes into the overflow. */
+  readonly top: number;
+  /** First steps of the segments whose mass is wanted value by value, ascending, the first one 0. */
+  readonly breaks: Int32Array;
+  /** Weighted mass below this is dropped at both ends of a law. */
+  readonly negligible: number;
+}
+
+/** The weighted conditional laws of sixteen factor values, summed and value by value. */
+export interface PanelLaw {
+  /** Sum over the values of weight · mass at the steps low, low + 1, … */
+  readonly low: number;
+  readonly masses: Float64Array;
+  /** Value by value: weight · mass above the top, and [segment][16] weight · mass and weight · Σ step · mass. */
+  readonly overflow: Float64Array;
+  readonly segmentMasses: Float64Array;
+  readonly segmentMoments: Float64Array;
+}
+
+/** Mean, variance and size of the slope (over the factor) of the conditional sum, in steps. */
+export interface ConditionalMoments {
+  readonly mean: number;
+  readonly variance: number;
+  readonly slope: number;
+}
+
+/** Which load the memory of each backend holds. */
+const loads = new WeakMap<RecursionBackend, number>();
 
 /**
- * The conditional law of a sum of independent defaults on a grid, built by adding names one at a time (Andersen,
- * Sidenius & Basu 2003). One instance holds its working memory; `add` and `reset` never allocate.
+ * The conditional law of a sum of independent defaults on a grid, built by adding names one at a time (Andersen, Sidenius &
+ * Basu 2003), at sixteen factor values a call. The names stay in the backend's memory until the next load, so that only the
+ * load made last may be used. A start mass of each value's quadrature weight makes what is dropped small in the answer.
  */
-export class ConditionalLaw {
-  /** Mass at 0..top steps; zero outside [low, high]. */
-  readonly mass: Float64Array;
-  /** Mass above `top` steps. */
-  overflow = 0;
-  low = 0;
-  high = 0;
+export class Recursion {
+  private readonly count: number;
+  private readonly load: number;
+  private readonly reals: Float64Array;
+  private readonly wholes: Int32Array;
+  private readonly at: ReturnType<typeof layout>;
 
-  constructor(readonly top: number) {
-    this.mass = new Float64Array(top + 1);
-    this.mass[0] = 1;
+  constructor(
+    names: RecursionNames,
+    private readonly shape: RecursionShape,
+    private readonly backend: RecursionBackend = recursionBackend(),
+  ) {
+    this.count = names.steps.length;
+    const { top, breaks } = shape;
+    const longest = names.steps.reduce((most, steps) => Math.max(most, steps), 0);
+    this.at = layout(this.count, top, Math.min(longest, top + 1), breaks.length);
+    this.load = (loads.get(backend) ?? 0) + 1;
+    loads.set(backend, this.load);
+    backend.reserve(this.at.end);
+    this.reals = new Float64Array(backend.memory());
+    this.wholes = new Int32Array(backend.memory());
+    this.reals.fill(0, this.at.law >> 3, this.at.end >> 3);
+    for (let i = 0; i < this.count; i++)
+      this.wholes[(this.at.steps >> 2) + i] = Math.min(names.steps[i]!, top + 1);
+    this.wholes.set(breaks, this.at.breaks >> 2);
+    this.reals.set(names.weights, this.at.weights >> 3);
+    this.reals.set(names.sizes, this.at.sizes >> 3);
+    this.reals.set(names.scaled, this.at.scaled >> 3);
+    this.reals.set(names.slopes, this.at.slopes >> 3);
   }
 
-  /** Back to no loss for certain. */
-  reset(): void {
-    this.mass.fill(0, this.low, this.high + 1);
-    this.mass[0] = 1;
-    this.overflow = 0;
-    this.low = 0;
-    this.high = 0;
-  }
-
-  /** Adds every name of the grid with its conditional default probability. */
-  addAll(grid: AmountGrid, probabilities: Float64Array): void {
-    const { shares } = grid;
-    for (let i = 0; i < shares.length; i++) {
-      const share = shares[i]!;
-      const weights = share.weights;
-      const probability = probabilities[i]!;
-      if (probability === 0) continue;
-      if (weights.length === 1) this.addOne(probability, share.steps);
-      else if (weights.length === 2) this.addShared(probability, share.steps, weights[0]!, weights[1]!, 0);
-      else this.addShared(probability, share.steps, weights[0]!, weights[1]!, weights[2]!);
+  /** The laws at sixteen factor values, each starting from its weight. */
+  panel(factors: Float64Array, weights: Float64Array): PanelLaw {
+    this.assertLoaded();
+    const { at, backend, count, reals, shape, wholes } = this;
+    const segments = shape.breaks.length;
+    const stride = 8 * PANEL_POINTS;
+    const overflow = new Float64Array(PANEL_POINTS);
+    let lowest = shape.top + 1;
+    let highest = -1;
+    reals.set(factors, at.factors >> 3);
+    for (let block = 0; block < PANEL_POINTS; block += LANES) {
+      reals.set(weights.subarray(block, block + LANES), at.rows >> 3);
+      backend.conditional(
+        count,
+        at.scaled,
+        at.slopes,
+        at.factors + 8 * block,
+        NORMAL_TABLE,
+        at.probabilities,
+      );
+      backend.addNames(
+        count,
+        shape.top,
+        shape.negligible,
+        at.rows,
+        at.steps,
+        at.weights,
+        at.probabilities,
+        at.overflow,
+        at.bounds,
+      );
+      const low = wholes[at.bounds >> 2]!;
+      const high = wholes[(at.bounds >> 2) + 1]!;
+      backend.collect(
+        at.rows,
+        low,
+        high,
+        at.law,
+        segments,
+        at.breaks,
+        at.masses + 8 * block,
+        at.moments + 8 * block,
+        stride,
+      );
+      overflow.set(reals.subarray(at.overflow >> 3, (at.overflow >> 3) + LANES), block);
+      lowest = Math.min(lowest, low);
+      highest = Math.max(highest, high);
     }
+    const law = at.law >> 3;
+    const masses = reals.slice(law + lowest, law + highest + 1);
+    reals.fill(0, law + lowest, law + highest + 1);
+    return {
+      low: lowest,
+      masses,
+      overflow,
+      segmentMasses: reals.slice(at.masses >> 3, (at.masses >> 3) + segments * PANEL_POINTS),
+      segmentMoments: reals.slice(at.moments >> 3, (at.moments >> 3) + segments * PANEL_POINTS),
+    };
   }
 
-  /** Adds a name that loses `steps` whole steps with the given probability. */
-  addOne(probability: number, steps: number): void {
-    if (steps === 0) return;
-    const { mass, top } = this;
-    const stay = 1 - probability;
-    if (this.high + steps > top) {
-      let lost = 0;
-      for (let u = Math.max(this.low, top - steps + 1); u <= this.high; u++) lost += mass[u]!;
-      this.overflow += probability * lost;
-    }
-    const high = Math.min(this.high + steps, top);
-    for (let u = high; u >= this.low + steps; u--) mass[u] = stay * mass[u]! + probability * mass[u - steps]!;
-    const below = Math.min(this.low + steps - 1, this.high);
-    for (let u = below; u >= this.low; u--) mass[u] = stay * mass[u]!;
-    this.high = high;
-    this.trim();
+  /** What the conditional sum looks like at two factor values, without its law. */
+  momentsAt(one: number, other: number): readonly [ConditionalMoments, ConditionalMoments] {
+    this.assertLoaded();
+    const { at, backend, reals } = this;
+    reals[at.factors >> 3] = one;
+    reals[(at.factors >> 3) + 1] = other;
+    backend.moments(this.count, at.scaled, at.slopes, at.sizes, at.factors, NORMAL_TABLE, at.overflow);
+    const read = (lane: number) => ({
+      mean: reals[(at.overflow >> 3) + lane]!,
+      variance: reals[(at.overflow >> 3) + 2 + lane]!,
+      slope: reals[(at.overflow >> 3) + 4 + lane]!,
+    });
+    return [read(0), read(1)];
   }
 
-  /** Adds a name whose loss is laid on two or three neighbouring grid points with weights that keep its mean. */
-  addShared(probability: number, steps: number, first: number, second: number, third: number): void {
-    const { mass, top } = this;
-    const stay = 1 - probability;
-    const one = probability * first;
-    const two = probability * second;
-    const three = probability * third;
-    const reach = steps + (third === 0 ? 1 : 2);
-    if (this.high + reach > top) this.overflow += this.spilled(steps, one, two, three);
-    const high = Math.min(this.high + reach, top);
-    const { low } = this;
-    for (let u = high; u >= low; u--) {
-      const from = u - steps;
-      let value = stay * mass[u]!;
-      if (from >= low) value += one * mass[from]!;
-      if (from - 1 >= low) value += two * mass[from - 1]!;
-      if (from - 2 >= low) value += three * mass[from - 2]!;
-      mass[u] = value;
-    }
-    this.high = high;
-    this.trim();
+  private assertLoaded(): void {
+    if (loads.get(this.backend) !== this.load)
+      throw new Error("These names have left the kernel: another recursion was loaded after them.");
   }
+}
 
-  /** Mass that a shared name takes above the top. */
-  private spilled(steps: number, one: number, two: number, three: number): number {
-    const { mass, top } = this;
-    let lost = 0;
-    for (let u = Math.max(this.low, top - steps - 1); u <= this.high; u++) {
-      const weight =
-        (u + steps > top ? one : 0) + (u + steps + 1 > top ? two : 0) + (u + steps + 2 > top ? three : 0);
-      lost += weight * mass[u]!;
-    }
-    return lost;
-  }
-
-  private trim(): void {
-    const { mass } = this;
-    while (this.high > this.low && Math.abs(mass[this.high]!) < NEGLIGIBLE) mass[this.high--] = 0;
-    while (this.low < this.high && Math.abs(mass[this.low]!) < NEGLIGIBLE) mass[this.low++] = 0;
-  }
+/** Byte offsets of one load. Rows stand last, with room below for the longest step and the unrolled loops. */
+function layout(count: number, top: number, longest: number, segments: number) {
+  let next = FREE_MEMORY;
+  const take = (bytes: number) => {
+    const start = next;
+    next = (next + bytes + 63) & ~63;
+    return start;
+  };
+  const at = {
+    steps: take(4 * count),
+    weights: take(24 * count),
+    sizes: take(8 * count),
+    scaled: take(8 * count),
+    slopes: take(8 * count),
+    probabilities: take(8 * LANES * count),
+    factors: take(8 * PANEL_POINTS),
+    overflow: take(64),
+    bounds: take(8),
+    breaks: take(4 * segments),
+    masses: take(8 * PANEL_POINTS * segments),
+    moments: take(8 * PANEL_POINTS * segments),
+    law: take(8 * (top + 1)),
+  };
+  const rows = take(8 * LANES * (longest + top + 12)) + 8 * LANES * (longest + 8);
+  return { ...at, rows, end: next };
 }

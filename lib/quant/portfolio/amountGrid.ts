@@ -14,6 +14,10 @@ export interface AmountGrid {
   readonly shares: readonly GridShare[];
   /** The largest sum the names can reach, in steps. */
   readonly top: number;
+  /** The shares as flat arrays for the recursion: whole steps, three landing weights a name, amounts in steps. */
+  readonly steps: Int32Array;
+  readonly weights: Float64Array;
+  readonly sizes: Float64Array;
 }
 
 /** An exact lattice may have at most this many steps (and names × steps at most WORKABLE_WORK). */
@@ -80,9 +84,22 @@ export function amountGrid(
   const exact = imposedUnit === undefined ? exactUnit(amounts) : null;
   const unit = imposedUnit ?? exact ?? sharedUnit(amounts);
   const shares = amounts.map((amount) => gridShare(amount / unit, landingPoints));
-  const isExact = shares.every((share) => share.weights.length === 1);
-  const top = shares.reduce((sum, share) => sum + share.steps + share.weights.length - 1, 0);
-  return { unit, isExact, shares, top };
+  return gridOfShares(unit, shares);
+}
+
+/** The grid of a selection of shares. */
+export function gridOfShares(unit: number, shares: readonly GridShare[]): AmountGrid {
+  return {
+    unit,
+    isExact: shares.every((share) => share.weights.length === 1),
+    shares,
+    top: shares.reduce((sum, share) => sum + share.steps + share.weights.length - 1, 0),
+    steps: Int32Array.from(shares, (share) => share.steps),
+    weights: Float64Array.from(shares.flatMap(({ weights }) => [0, 1, 2].map((k) => weights[k] ?? 0))),
+    sizes: Float64Array.from(shares, (share) =>
+      share.weights.reduce((sum, weight, k) => sum + k * weight, share.steps),
+    ),
+  };
 }
 
 function sharedUnit(amounts: readonly number[]): number {

@@ -59,7 +59,6 @@ export class PoolLaws {
   private readonly kept = new Map<string, Distribution>();
   /** Conditional laws worked out so far: the machine-independent measure of the work. */
   evaluations = 0;
-  private readonly lastTotals = new Map<string, Float64Array>();
 
   constructor(
     readonly portfolio: Portfolio,
@@ -151,14 +150,11 @@ export class PoolLaws {
     const loadings = this.loadingsOf(dependence);
     const grid = this.gridOf(kind, smooth ? 3 : 2);
     if (grid === null) return atomic(subsetLaw(amounts, { thresholds: at, loadings }, strikes));
-    const totalsKey = `${kind} ${keyOf(dependence)} ${upTo} ${smooth}`;
     const law = oneFactorLaw(
       grid,
       { thresholds: at, loadings },
-      { strikes, upTo },
-      this.lastTotals.get(totalsKey) ?? null,
+      { strikes, upTo, minimumOnly: Number.isFinite(upTo) },
     );
-    if (strikes.length > 0) this.lastTotals.set(totalsKey, law.totals);
     this.evaluations += law.evaluations;
     return atomic(law);
   }

@@ -1,10 +1,10 @@
 import { type ConditionalFamily, mixOverFactor, withoutFactor } from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
-import type { AmountGrid } from "./amountGrid";
+import { type AmountGrid, gridOfShares } from "./amountGrid";
 import { comonotonicLaw } from "./comonotonicLaw";
 import { panelBoundaries, settledFrom } from "./factorPanels";
 import type { AmountLaw } from "./lossLaw";
-import { gridSizes, LOWEST_FACTOR, oneFactorLaw } from "./oneFactorLaw";
+import { LOWEST_FACTOR, oneFactorLaw } from "./oneFactorLaw";
 
 /** Asset correlation inside a sector and across sectors, 0 ≤ between ≤ within ≤ 1. */
 export interface SectorCorrelation {
@@ -36,7 +36,7 @@ export function sectorLaw(
     withoutFactor(family);
   } else {
     const high = settledFrom(names);
-    const boundaries = panelBoundaries(gridSizes(grid), names, LOWEST_FACTOR, high);
+    const boundaries = panelBoundaries([...grid.sizes], names, LOWEST_FACTOR, high);
     error = mixOverFactor(family, boundaries, OUTER_ACCURACY, null).error;
     family.total[0]! += normalCdf(-high);
   }
@@ -67,8 +67,7 @@ class SectorFamily implements ConditionalFamily {
     this.probes = 2 * strikes.length;
     this.sectors = groups.map((positions) => {
       const shares = positions.map((i) => grid.shares[i]!);
-      const top = shares.reduce((sum, share) => sum + share.steps + share.weights.length - 1, 0);
-      return { grid: { ...grid, shares, top }, positions };
+      return { grid: gridOfShares(grid.unit, shares), positions };
     });
   }
 
@@ -104,8 +103,8 @@ class SectorFamily implements ConditionalFamily {
     const loadings = new Float64Array(thresholds.length).fill(Math.sqrt(inner));
     const reach = sector.grid.top * sector.grid.unit;
     const strikes = [0.25 * reach, 0.5 * reach, 0.75 * reach];
-    const request = { strikes, upTo: Number.POSITIVE_INFINITY };
-    return oneFactorLaw(sector.grid, { thresholds, loadings }, request, INNER_EXPECTED).masses;
+    const request = { strikes, upTo: Number.POSITIVE_INFINITY, floor: INNER_SIZE };
+    return oneFactorLaw(sector.grid, { thresholds, loadings }, request).masses;
   }
 
   private convolve(masses: Float64Array, top: number): void {
@@ -136,11 +135,11 @@ class SectorFamily implements ConditionalFamily {
 }
 
 /** Probes of a sector's law are held to this size: its own tail matters only as far as the pool's does. */
-const INNER_EXPECTED = new Float64Array(6).fill(1e-4);
+const INNER_SIZE = 1e-4;
 
 /** The comonotonic law of a sector laid on the grid. */
 function onGrid(grid: AmountGrid, thresholds: Float64Array): Float64Array {
-  const law = comonotonicLaw(gridSizes(grid), thresholds);
+  const law = comonotonicLaw([...grid.sizes], thresholds);
   const masses = new Float64Array(grid.top + 1);
   for (let k = 0; k < law.amounts.length; k++) {
     const steps = law.amounts[k]!;
