@@ -1,4 +1,5 @@
-import { type RecursionBackend, recursionBackend } from "./backend";
+import { recursionBackend } from "./backend";
+import type { RecursionBackend } from "./instructions";
 import { FREE_MEMORY, NORMAL_TABLE } from "./normalTable";
 
 /** Factor values worked out in one call. */

@@ -1,4 +1,4 @@
-import type { RecursionBackend } from "./backend";
+import type { RecursionBackend } from "./instructions";
 import { writeNormalTable } from "./normalTable";
 
 const TABLE_LOW = -13;
