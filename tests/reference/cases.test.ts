@@ -1,8 +1,10 @@
-import { readdirSync, readFileSync } from "node:fs";
+import { readdirSync } from "node:fs";
 import { join } from "node:path";
-import { describe, expect, it } from "vitest";
+import { afterAll, describe, expect, it } from "vitest";
 import { price } from "@/lib/pricing/price";
 import { reportSchema } from "@/lib/pricing/report";
+import { casesFolder, data } from "./support/data";
+import { LargestErrors } from "./support/largestErrors";
 
 interface ReferenceCase {
   readonly request: unknown;
@@ -11,7 +13,10 @@ interface ReferenceCase {
   readonly tolerance: Readonly<Record<string, number>>;
 }
 
-const folder = join(process.cwd(), "tests", "reference", "data", "cases");
+const errors = new LargestErrors(
+  "Reference requests: difference from the independent implementation, relative above one",
+);
+afterAll(() => errors.print());
 
 /** The value at a dotted path; `length` is an array's. */
 function at(report: unknown, path: string): unknown {
@@ -36,20 +41,23 @@ function mismatch(report: unknown, path: string, wanted: unknown, tolerance: num
       ? null
       : `${path} is ${found}, below ${wanted.min}`;
   }
+  if (typeof wanted === "object" && wanted !== null && "absentOrNull" in wanted) {
+    return found === undefined || found === null ? null : `${path} is ${found}, not absent`;
+  }
   return found === wanted ? null : `${path} is ${found}, not ${wanted}`;
 }
 
 // Source: an independent implementation in Python, see data/README.md; invented data.
 describe("the report of a reference request is that of the independent implementation", () => {
-  for (const file of readdirSync(folder).sort()) {
-    const reference = JSON.parse(readFileSync(join(folder, file), "utf8")) as ReferenceCase;
+  for (const file of readdirSync(casesFolder).sort()) {
+    const reference = data<ReferenceCase>(join("cases", file));
     it(file.replace(".json", ""), () => {
       const outcome = price(reference.request);
-      const { errors, ...figures } = reference.expect;
-      if (errors) {
+      const { errors: refusals, ...figures } = reference.expect;
+      if (refusals) {
         const paths = outcome.ok ? [] : outcome.problems.map((problem) => problem.path);
-        const missing = errors.filter(
-          (error) => !paths.some((path) => path === error || path.startsWith(`${error}.`)),
+        const missing = refusals.filter(
+          (refusal) => !paths.some((path) => path === refusal || path.startsWith(`${refusal}.`)),
         );
         expect(missing).toEqual([]);
         return;
@@ -57,6 +65,14 @@ describe("the report of a reference request is that of the independent implement
       expect(outcome.ok ? [] : outcome.problems).toEqual([]);
       if (!outcome.ok) return;
       expect(reportSchema.safeParse(outcome.report).error).toBeUndefined();
+      const topic = file.replace(/^pub-\d+-|\.json$/g, "");
+      for (const [path, wanted] of Object.entries(figures)) {
+        const found = at(outcome.report, path);
+        if (typeof wanted !== "number" || typeof found !== "number") continue;
+        const scale = Math.max(1, Math.abs(wanted));
+        const allowed = Math.max(reference.tolerance[path] ?? 1e-9, 1e-16);
+        errors.note(topic, Math.abs(found - wanted) / scale, allowed / scale, `${file} ${path}`);
+      }
       const wrong = Object.entries(figures).map(([path, wanted]) =>
         mismatch(outcome.report, path, wanted, reference.tolerance[path] ?? 1e-9),
       );
