@@ -1,9 +1,13 @@
+import { attribute } from "../pricing/attribution";
+import type { PricingRequest } from "../pricing/request";
 import { answer } from "./answer";
 import type { PricingAnswer } from "./protocol";
 
 /** What a browser's worker can be asked for: each a pure function of its input. */
 export const tasks = {
   price: (request: unknown): PricingAnswer => answer({ request }),
+  attribute: ({ before, after }: { before: PricingRequest; after: PricingRequest }) =>
+    attribute(before, after),
 };
 
 export type TaskKind = keyof typeof tasks;

@@ -1,0 +1,3 @@
+import type { Operations } from "@/lib/operations";
+
+export type OpenRun = Operations["runs.open"]["output"];
