@@ -57,3 +57,9 @@ export async function liveStream(
     },
   });
 }
+
+/** Whether a person may have a workspace's stream now. @throws Refusal when the person is no member. */
+export async function mustBeMember(workspaceId: string, actor: Actor): Promise<void> {
+  const { database } = await store();
+  await membershipOf(database, workspaceId, actor.userId);
+}

@@ -1,7 +1,6 @@
 import { currentActor } from "@/lib/platform/accounts/auth";
-import { store } from "@/lib/platform/db/store";
 import { Refusal } from "@/lib/platform/errors";
-import { membershipOf } from "@/lib/platform/run";
+import { mustBeMember } from "@/lib/platform/events/liveStream";
 
 export const dynamic = "force-dynamic";
 
@@ -11,8 +10,7 @@ export async function GET(request: Request): Promise<Response> {
   const actor = await currentActor(request.headers);
   if (!actor) return new Response(null, { status: 401 });
   try {
-    const { database } = await store();
-    await membershipOf(database, workspaceId, actor.userId);
+    await mustBeMember(workspaceId, actor);
     return new Response(null, { status: 204 });
   } catch (error) {
     if (error instanceof Refusal) return new Response(null, { status: error.status });
