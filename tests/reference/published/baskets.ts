@@ -1,7 +1,7 @@
 import type { PricingRequest } from "@/lib/pricing/request";
-import { ConditionalLaw } from "@/lib/quant/kernel/recursion";
 import { defaultProbability, flatHazard } from "@/lib/quant/market/survivalCurve";
 import { gaussHermite, printedFactor } from "../support/gaussRule";
+import { independentCounts } from "../support/independentCounts";
 import { type Check, input, type Published } from "./check";
 import { breakEven, evenTimes, type PrintedLegs, printedLegs } from "./legs";
 import { conditional, reportOf } from "./tranches";
@@ -63,13 +63,12 @@ function thirdLegs(reached: readonly number[]): PrintedLegs {
 /** The unconditional chance with the source's 60-point rule over the factor. */
 function thirdByHermite(points: number): number[] {
   const { nodes, weights } = gaussHermite(points);
-  const law = new ConditionalLaw(10);
   const reached = YEARS.map(() => 0);
   for (const [i, node] of nodes.entries()) {
     for (const [year, probability] of conditionalYears(Math.SQRT2 * node).entries()) {
-      law.reset();
-      for (let name = 0; name < 10; name++) law.addOne(probability, 1);
-      const beyond = law.mass.slice(3).reduce((sum, mass) => sum + mass, 0);
+      const beyond = independentCounts(10, probability)
+        .slice(3)
+        .reduce((sum, mass) => sum + mass, 0);
       reached[year]! += (weights[i]! / Math.sqrt(Math.PI)) * beyond;
     }
   }

@@ -1,12 +1,12 @@
 import { price } from "@/lib/pricing/price";
 import type { PricingReport } from "@/lib/pricing/report";
 import type { PricingRequest } from "@/lib/pricing/request";
-import { ConditionalLaw } from "@/lib/quant/kernel/recursion";
 import { discountFactor } from "@/lib/quant/market/discountCurve";
 import { defaultProbability, flatHazard } from "@/lib/quant/market/survivalCurve";
 import { normalCdf, normalQuantile } from "@/lib/quant/maths/normal";
 import { brentRoot } from "@/lib/quant/maths/roots";
 import { gaussHermite, printedFactor } from "../support/gaussRule";
+import { independentCounts } from "../support/independentCounts";
 import { type Check, input, type Published } from "./check";
 import { textbookHazard } from "./defaultSwaps";
 import { breakEven, evenTimes, flatCurve, type PrintedLegs, printedLegs } from "./legs";
@@ -65,10 +65,9 @@ function conditionalOutstanding(pool: AlikePool, rho: number, strikes: Strikes, 
   return [1, ...timeline!.map(({ trancheExpectedLoss }) => 1 - trancheExpectedLoss[0]!)];
 }
 
-/** The same with the source's own Gauss–Hermite rule over the factor, names added by the core's recursion. */
+/** The same with the source's own Gauss–Hermite rule over the factor. */
 function hermiteOutstanding(pool: AlikePool, rho: number, strikes: Strikes, points: number): number[] {
   const { nodes, weights } = gaussHermite(points);
-  const law = new ConditionalLaw(pool.names);
   const [attachment, detachment] = strikes;
   const loss = (1 - pool.recovery) / pool.names;
   const shares = Array.from({ length: pool.names + 1 }, (_, k) =>
@@ -78,10 +77,9 @@ function hermiteOutstanding(pool: AlikePool, rho: number, strikes: Strikes, poin
     const probability = defaultProbability(flatHazard(pool.hazard), j / 4);
     let expected = 0;
     for (const [i, node] of nodes.entries()) {
-      law.reset();
       const given = j === 0 ? 0 : conditional(probability, rho, Math.SQRT2 * node);
-      for (let name = 0; name < pool.names; name++) law.addOne(given, 1);
-      const mean = shares.reduce((sum, share, k) => sum + share * law.mass[k]!, 0);
+      const law = independentCounts(pool.names, given);
+      const mean = shares.reduce((sum, share, k) => sum + share * law[k]!, 0);
       expected += (weights[i]! / Math.sqrt(Math.PI)) * mean;
     }
     return 1 - expected;
