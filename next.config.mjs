@@ -3,6 +3,7 @@ export default {
   serverExternalPackages: [
     "@electric-sql/pglite",
     "pg",
+    "pg-boss",
     "pglite-prisma-adapter",
     "@prisma/adapter-pg",
     "piscina",

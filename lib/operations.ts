@@ -3,6 +3,8 @@ import { commands as dealCommands } from "./deals/commands";
 import { queries as dealQueries } from "./deals/queries";
 import { commands as discussionCommands } from "./discussion/commands";
 import { queries as discussionQueries } from "./discussion/queries";
+import { commands as jobCommands } from "./jobs/commands";
+import { queries as jobQueries } from "./jobs/queries";
 import { commands as marketCommands } from "./markets/commands";
 import { queries as marketQueries } from "./markets/queries";
 import type { AnyOperation } from "./platform/run";
@@ -24,6 +26,8 @@ const rooms = [
   dealQueries,
   runCommands,
   runQueries,
+  jobCommands,
+  jobQueries,
   discussionCommands,
   discussionQueries,
   activityQueries,

@@ -1,7 +1,8 @@
 import { availableParallelism } from "node:os";
 import { Piscina } from "piscina";
 import { refuse } from "../platform/errors";
-import type { PricingAnswer, PricingTask } from "./protocol";
+import type { PricingAnswer } from "./protocol";
+import type { TaskInput, TaskKind, TaskMessage, TaskOutput } from "./tasks";
 import { workerFile } from "./workerFile";
 
 const LONGEST_QUEUE = 64;
@@ -9,7 +10,7 @@ const MOST_PER_PERSON = 8;
 const LONGEST_RUN = 5 * 60_000;
 
 interface ComputePool {
-  readonly threads: Promise<Piscina<PricingTask, PricingAnswer>>;
+  readonly threads: Promise<Piscina<Omit<TaskMessage, "id">, unknown>>;
   readonly waiting: Map<string, number>;
 }
 
@@ -20,7 +21,7 @@ function pool(): ComputePool {
   return shared.loadlineCompute;
 }
 
-async function startThreads(): Promise<Piscina<PricingTask, PricingAnswer>> {
+async function startThreads(): Promise<Piscina<Omit<TaskMessage, "id">, unknown>> {
   const filename = await workerFile();
   const threads = Math.max(1, availableParallelism() - 1);
   return new Piscina({
@@ -32,12 +33,21 @@ async function startThreads(): Promise<Piscina<PricingTask, PricingAnswer>> {
   });
 }
 
+/** Prices a request in a thread of its own. @throws Refusal as `computeOnServer` does. */
+export function priceOnServer(request: unknown, person: string): Promise<PricingAnswer> {
+  return computeOnServer("price", request, person);
+}
+
 /**
- * Prices a request in a thread of its own, never on the web thread. Each person may have a few tasks waiting, so that one
+ * Runs a task in a thread of its own, never on the web thread. Each person may have a few tasks waiting, so that one
  * cannot crowd out the others.
  * @throws Refusal "unavailable" when the queue is full or the task took too long.
  */
-export async function priceOnServer(request: unknown, person: string): Promise<PricingAnswer> {
+export async function computeOnServer<Kind extends TaskKind>(
+  kind: Kind,
+  input: TaskInput<Kind>,
+  person: string,
+): Promise<TaskOutput<Kind>> {
   const { threads, waiting } = pool();
   const own = waiting.get(person) ?? 0;
   if (own >= MOST_PER_PERSON)
@@ -47,7 +57,8 @@ export async function priceOnServer(request: unknown, person: string): Promise<P
     const piscina = await threads;
     if (piscina.queueSize >= LONGEST_QUEUE)
       throw refuse("unavailable", "queueFull", "Too many pricings are waiting: try again in a minute.");
-    return await piscina.run({ request }, { signal: AbortSignal.timeout(LONGEST_RUN) });
+    const signal = AbortSignal.timeout(LONGEST_RUN);
+    return (await piscina.run({ kind, input }, { signal })) as TaskOutput<Kind>;
   } catch (error) {
     if (error instanceof Error && error.name === "AbortError") {
       throw refuse(

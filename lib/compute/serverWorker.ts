@@ -1,4 +1,6 @@
-import { answer } from "./answer";
+import { type TaskMessage, tasks } from "./tasks";
 
-/** A server thread prices what it is sent. */
-export default answer;
+/** A server thread answers the task that it is sent. */
+export default function work({ kind, input }: Omit<TaskMessage, "id">): unknown {
+  return tasks[kind](input as never);
+}

@@ -1,11 +1,16 @@
 import { attribute } from "../pricing/attribution";
 import type { PricingRequest } from "../pricing/request";
+import type { Shock } from "../pricing/shock";
+import { type ShockedFigures, shockedFigures } from "../pricing/shockedFigures";
 import { answer } from "./answer";
 import type { PricingAnswer } from "./protocol";
 
-/** What a browser's worker can be asked for: each a pure function of its input. */
+/** What a worker can be asked for, in the browser or on the server: each a pure function of its input. */
 export const tasks = {
   price: (request: unknown): PricingAnswer => answer({ request }),
+  /** Every class of a request after a shock. */
+  shocked: ({ request, shock }: { readonly request: unknown; readonly shock: Shock }): ShockedFigures =>
+    shockedFigures(request, shock),
   attribute: ({ before, after }: { before: PricingRequest; after: PricingRequest }) =>
     attribute(before, after),
 };

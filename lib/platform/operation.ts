@@ -1,6 +1,7 @@
 import type { z } from "zod";
 import type { Actor, Membership } from "./accounts/actor";
 import type { Transaction } from "./db/client";
+import type { EventRecord } from "./events/emit";
 
 /** What changed, for the append-only record. */
 export interface ActivityRecord {
@@ -11,14 +12,6 @@ export interface ActivityRecord {
   readonly dealId?: string | undefined;
   readonly before?: unknown;
   readonly after?: unknown;
-}
-
-/** What open pages are told. */
-export interface EventRecord {
-  readonly workspaceId: string;
-  readonly dealId?: string | undefined;
-  readonly kind: string;
-  readonly payload: Readonly<Record<string, unknown>>;
 }
 
 /** What a query sees: a transaction, the person, the time, and the person's place in a workspace. */

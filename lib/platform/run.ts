@@ -4,7 +4,7 @@ import type { Actor } from "./accounts/actor";
 import { type Membership, roles } from "./accounts/actor";
 import type { Database, Transaction } from "./db/client";
 import { notFound, type Problem, Refusal, refuse } from "./errors";
-import { CHANNEL } from "./events/channel";
+import { emitEvent } from "./events/emit";
 import type { Ask, Command, CommandContext, Query } from "./operation";
 
 /** Any registered operation, whatever its input and output. */
@@ -82,19 +82,7 @@ function contextOf(tx: Transaction, actor: Actor, now: Date): CommandContext {
         },
       });
     },
-    emit: async (event) => {
-      await tx.$executeRaw`SELECT pg_advisory_xact_lock(hashtext(${event.workspaceId}))`;
-      const { id } = await tx.event.create({
-        data: {
-          workspaceId: event.workspaceId,
-          dealId: event.dealId ?? null,
-          kind: event.kind,
-          payload: event.payload as Prisma.InputJsonObject,
-          at: now,
-        },
-      });
-      await tx.$executeRaw`SELECT pg_notify(${CHANNEL}, ${`${event.workspaceId} ${id}`})`;
-    },
+    emit: (event) => emitEvent(tx, event, now),
   };
 }
 

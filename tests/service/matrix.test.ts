@@ -4,7 +4,7 @@ import { findOperation, operations } from "@/lib/operations";
 import { Refusal, type RefusalKind } from "@/lib/platform/errors";
 import { execute } from "@/lib/platform/run";
 import { withDatabase } from "../support/database";
-import { aDealContent, aMarketContent, aName, aWorld } from "../support/world";
+import { aDealContent, aGrid, aMarketContent, aName, aRequest, aWorld } from "../support/world";
 
 type World = Awaited<ReturnType<typeof aWorld>>;
 type Outcome = "ok" | RefusalKind;
@@ -166,6 +166,19 @@ const rows: Record<string, Row> = {
   "runs.open": {
     expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
     input: ({ workspaceId }) => ({ workspaceId, runId: "none" }),
+  },
+  "jobs.start": {
+    expected: workers,
+    input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, request: aRequest(), grid: aGrid }),
+  },
+  "jobs.cancel": {
+    expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, jobId: "none" }),
+  },
+  "jobs.list": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "jobs.open": {
+    expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, jobId: "none" }),
   },
   "discussion.start": {
     expected: workers,

@@ -4,6 +4,7 @@ import type { Actor, Role } from "@/lib/platform/accounts/actor";
 import type { Database } from "@/lib/platform/db/client";
 import { execute } from "@/lib/platform/run";
 import { commands as pools } from "@/lib/pools/commands";
+import type { PricingRequest } from "@/lib/pricing/request";
 import { commands as workspaces } from "@/lib/workspaces/commands";
 
 /** A person known to the store, without a password. */
@@ -36,6 +37,22 @@ export const aDealContent = {
   nthToDefault: [1],
   notes: "",
 };
+
+/** A request of `count` names alike, and the two classes of the deal. */
+export function aRequest(count = 3): PricingRequest {
+  return {
+    format: 1,
+    currency: "EUR",
+    schedule: { kind: "even", years: 5, perYear: 4 },
+    discount: { kind: "flat", rate: 0.03 },
+    pool: Array.from({ length: count }, (_, i) => aName(`N${i}`) as PricingRequest["pool"][number]),
+    correlation: { kind: "flat", rho: 0.3 },
+    tranches: aDealContent.classes.map(({ name: _name, ...tranche }) => tranche),
+  };
+}
+
+/** A stress grid of two by two. */
+export const aGrid = { spreads: { kind: "relative", steps: [0, 1] }, correlations: [0, 0.1], shock: {} };
 
 /** A workspace with a member of every role, a pool, a market and a deal. */
 export async function aWorld(database: Database) {

@@ -14,6 +14,8 @@ export interface Store {
   readonly database: Database;
   /** Calls back with each payload sent to the channel; resolves with the stop. */
   listen(channel: string, heard: (payload: string) => void): Promise<() => Promise<void>>;
+  /** Runs plain SQL beside the client, for a library that brings its own statements; without values there may be several. */
+  sql(text: string, values?: readonly unknown[]): Promise<{ rows: Record<string, unknown>[] }>;
   close(): Promise<void>;
 }
 
@@ -40,6 +42,11 @@ export async function openEmbedded(folder: string): Promise<Store> {
       mode: "embedded",
       database,
       listen: async (channel, heard) => client.listen(channel, heard),
+      sql: async (text, values) => {
+        if (values) return client.query(text, [...values]);
+        const results = await client.exec(text);
+        return { rows: results.at(-1)?.rows ?? [] };
+      },
       close: async () => {
         await database.$disconnect();
         await client.close().catch(() => undefined);
@@ -74,11 +81,17 @@ export async function openServer(url: string): Promise<Store> {
   }
   const adapter = new PrismaPg({ connectionString: url, options: "-c timezone=UTC", max: 10 });
   const database = new PrismaClient({ adapter, transactionOptions: TRANSACTIONS });
+  const plain = new pg.Pool({ connectionString: url, options: "-c timezone=UTC", max: 3 });
+  plain.on("error", () => undefined);
   return {
     mode: "server",
     database,
     listen: (channel, heard) => listenOnServer(url, channel, heard),
-    close: () => database.$disconnect(),
+    sql: (text, values) => plain.query(text, values && [...values]),
+    close: async () => {
+      await plain.end();
+      await database.$disconnect();
+    },
   };
 }
 

@@ -2,7 +2,10 @@ import { config } from "../config";
 import { openEmbedded, openServer, type Store } from "./open";
 
 /** The framework evaluates modules more than once a process: the one open store is kept where all of them see it. */
-const shared = globalThis as typeof globalThis & { loadlineStore?: Promise<Store> | undefined };
+const shared = globalThis as typeof globalThis & {
+  loadlineStore?: Promise<Store> | undefined;
+  loadlineUsers?: (() => Promise<void>)[] | undefined;
+};
 
 /** The process's store, opened on first use; never during a build. */
 export function store(): Promise<Store> {
@@ -23,8 +26,16 @@ async function open(): Promise<Store> {
   }
 }
 
-/** Closes the store if it is open. */
+/** Has something that uses the store ended before the store closes. */
+export function beforeClosing(end: () => Promise<void>): void {
+  shared.loadlineUsers = [...(shared.loadlineUsers ?? []), end];
+}
+
+/** Closes the store if it is open, after what uses it. */
 export async function closeStore(): Promise<void> {
+  const users = shared.loadlineUsers ?? [];
+  shared.loadlineUsers = undefined;
+  await Promise.allSettled(users.map((end) => end()));
   const opened = shared.loadlineStore;
   shared.loadlineStore = undefined;
   if (opened) await (await opened).close();

@@ -7,6 +7,7 @@ const STAMP = join(process.cwd(), ".next", "sources");
 const SOURCES = [
   "app",
   "lib",
+  "instrumentation.ts",
   "package-lock.json",
   "next.config.mjs",
   "postcss.config.mjs",
