@@ -23,6 +23,7 @@ export interface RecursionBackend {
     rows: number,
     steps: number,
     weights: number,
+    sizes: number,
     probabilities: number,
     overflow: number,
     bounds: number,

@@ -34,8 +34,10 @@ export interface PanelLaw {
   /** Sum over the values of weight · mass at the steps low, low + 1, … */
   readonly low: number;
   readonly masses: Float64Array;
-  /** Value by value: weight · mass above the top, and [segment][16] weight · mass and weight · Σ step · mass. */
+  /** Value by value, above the top: weight · mass and weight · Σ step · mass. */
   readonly overflow: Float64Array;
+  readonly overflowMoments: Float64Array;
+  /** The same at [segment][16]. */
   readonly segmentMasses: Float64Array;
   readonly segmentMoments: Float64Array;
 }
@@ -93,6 +95,7 @@ export class Recursion {
     const segments = shape.breaks.length;
     const stride = 8 * PANEL_POINTS;
     const overflow = new Float64Array(PANEL_POINTS);
+    const overflowMoments = new Float64Array(PANEL_POINTS);
     let lowest = shape.top + 1;
     let highest = -1;
     reals.set(factors, at.factors >> 3);
@@ -113,6 +116,7 @@ export class Recursion {
         at.rows,
         at.steps,
         at.weights,
+        at.sizes,
         at.probabilities,
         at.overflow,
         at.bounds,
@@ -130,7 +134,9 @@ export class Recursion {
         at.moments + 8 * block,
         stride,
       );
-      overflow.set(reals.subarray(at.overflow >> 3, (at.overflow >> 3) + LANES), block);
+      const spilled = at.overflow >> 3;
+      overflow.set(reals.subarray(spilled, spilled + LANES), block);
+      overflowMoments.set(reals.subarray(spilled + LANES, spilled + 2 * LANES), block);
       lowest = Math.min(lowest, low);
       highest = Math.max(highest, high);
     }
@@ -141,6 +147,7 @@ export class Recursion {
       low: lowest,
       masses,
       overflow,
+      overflowMoments,
       segmentMasses: reals.slice(at.masses >> 3, (at.masses >> 3) + segments * PANEL_POINTS),
       segmentMoments: reals.slice(at.moments >> 3, (at.moments >> 3) + segments * PANEL_POINTS),
     };

@@ -20,6 +20,7 @@ export function twinBackend(): RecursionBackend {
   const stay = new Float64Array(LANES);
   const scale = new Float64Array(LANES);
   const sums = new Float64Array(LANES);
+  const firsts = new Float64Array(LANES);
 
   const normalCdf = (x: number, table: number): number => {
     const inside = Math.min(Math.max(x, TABLE_LOW), TABLE_HIGH);
@@ -61,18 +62,32 @@ export function twinBackend(): RecursionBackend {
     top: number,
     step: number,
     reach: number,
+    base: number,
     weight: number,
     overflow: number,
   ): void => {
     sums.fill(0);
+    firsts.fill(0);
     let next = high;
     for (let landing = 0; landing <= reach; landing++) {
-      for (const least = Math.max(low, top - step - landing + 1); next >= least; next--)
-        for (let lane = 0; lane < LANES; lane++) sums[lane]! += reals[rows + LANES * next + lane]!;
-      const share = reals[weight + landing]!;
-      for (let lane = 0; lane < LANES; lane++)
-        reals[(overflow >> 3) + lane]! += scale[lane]! * p[lane]! * share * sums[lane]!;
+      for (const least = Math.max(low, top - step - landing + 1); next >= least; next--) {
+        for (let lane = 0; lane < LANES; lane++) {
+          const mass = reals[rows + LANES * next + lane]!;
+          sums[lane]! += mass;
+          firsts[lane]! += next * mass;
+        }
+      }
+      for (let lane = 0; lane < LANES; lane++) {
+        const share = scale[lane]! * p[lane]! * reals[weight + landing]!;
+        reals[overflow + lane]! += share * sums[lane]!;
+        reals[overflow + LANES + lane]! += share * (firsts[lane]! + (base + landing) * sums[lane]!);
+      }
     }
+  };
+
+  const moveOverflow = (overflow: number, size: number): void => {
+    for (let lane = 0; lane < LANES; lane++)
+      reals[overflow + LANES + lane]! += p[lane]! * size * reals[overflow + lane]!;
   };
 
   /** rows[u] = keep · rows[u] + one · rows[u − shift] + two · rows[u − shift − 1] + three · rows[u − shift − 2]. */
@@ -109,15 +124,18 @@ export function twinBackend(): RecursionBackend {
     rowsAt,
     steps,
     weights,
+    sizes,
     probabilities,
-    overflow,
+    overflowAt,
     bounds,
   ) => {
     const rows = rowsAt >> 3;
+    const overflow = overflowAt >> 3;
+    let hasSpilled = false;
     let low = 0;
     let high = 0;
     scale.fill(1);
-    reals.fill(0, overflow >> 3, (overflow >> 3) + LANES);
+    reals.fill(0, overflow, overflow + 2 * LANES);
     for (let i = 0; i < count; i++) {
       const step = wholes[(steps >> 2) + i]!;
       const weight = (weights >> 3) + 3 * i;
@@ -129,18 +147,23 @@ export function twinBackend(): RecursionBackend {
         stay[lane] = 1 - p[lane]!;
       }
       if (p.every((chance) => chance === 0)) continue;
-      if (high + step + reach > top) spill(rows, low, high, top, step, reach, weight, overflow);
+      const size = reals[(sizes >> 3) + i]!;
+      if (hasSpilled) moveOverflow(overflow, size);
+      if (high + step + reach > top) {
+        spill(rows, low, high, top, step, reach, size - second - 2 * third, weight, overflow);
+        hasSpilled = true;
+      }
       high = Math.min(high + step + reach, top);
       work += LANES * (high - low + 1);
       const from = rows + LANES * high;
       const to = rows + LANES * low;
       const isLikely = stay.some((chance) => chance < PLAIN_BELOW);
       for (let lane = 0; lane < LANES; lane++) {
-        const size = isLikely ? p[lane]! : p[lane]! / stay[lane]!;
+        const part = isLikely ? p[lane]! : p[lane]! / stay[lane]!;
         if (!isLikely) scale[lane]! *= stay[lane]!;
         const keep = isLikely ? stay[lane]! : 1;
-        const first = size * reals[weight]!;
-        sweep(from + lane, to + lane, LANES * step, keep, first, size * second, size * third);
+        const first = part * reals[weight]!;
+        sweep(from + lane, to + lane, LANES * step, keep, first, part * second, part * third);
       }
       if (!isLikely && scale.some((factor) => factor < SMALLEST_SCALE)) {
         multiply(from, to);

@@ -185,7 +185,10 @@ function addLikely(
   }
 }
 
-/** Adds to `overflow` what a name of `steps` and default probability p sends above `top`; rows count `scale` times. */
+/**
+ * Adds to `overflow` (four masses, four sums of steps times mass) what a name sends above `top`. `base` is its first landing
+ * point, not clamped; p and q its default probabilities times what a row stands for.
+ */
 function spill(
   rows: usize,
   low: i32,
@@ -193,6 +196,7 @@ function spill(
   top: i32,
   steps: i32,
   reach: i32,
+  base: f64,
   p: v128,
   q: v128,
   weights: usize,
@@ -200,18 +204,40 @@ function spill(
 ): void {
   let sumP = twice(0);
   let sumQ = twice(0);
+  let momentP = twice(0);
+  let momentQ = twice(0);
   let next = high;
   for (let landing: i32 = 0; landing <= reach; landing++) {
     const least = max(low, top - steps - landing + 1);
     for (; next >= least; next--) {
       const row = rows + (<usize>next << 5);
-      sumP = plus(sumP, load2(row));
-      sumQ = plus(sumQ, v128.load(row, 16));
+      const at = twice(<f64>next);
+      const massP = load2(row);
+      const massQ = load2(row + 16);
+      sumP = plus(sumP, massP);
+      sumQ = plus(sumQ, massQ);
+      momentP = plus(momentP, times(at, massP));
+      momentQ = plus(momentQ, times(at, massQ));
     }
     const weight = v128.load64_splat(weights + (<usize>landing << 3));
-    store2(overflow, plus(load2(overflow), times(times(p, weight), sumP)));
-    v128.store(overflow, plus(v128.load(overflow, 16), times(times(q, weight), sumQ)), 16);
+    const place = twice(base + <f64>landing);
+    const shareP = times(p, weight);
+    const shareQ = times(q, weight);
+    store2(overflow, plus(load2(overflow), times(shareP, sumP)));
+    v128.store(overflow, plus(v128.load(overflow, 16), times(shareQ, sumQ)), 16);
+    const furtherP = times(shareP, plus(momentP, times(place, sumP)));
+    const furtherQ = times(shareQ, plus(momentQ, times(place, sumQ)));
+    v128.store(overflow, plus(v128.load(overflow, 32), furtherP), 32);
+    v128.store(overflow, plus(v128.load(overflow, 48), furtherQ), 48);
   }
+}
+
+/** A name of `size` moves on what already lies above the top. */
+function moveOverflow(overflow: usize, size: f64, p: v128, q: v128): void {
+  const furtherP = times(times(p, twice(size)), load2(overflow));
+  const furtherQ = times(times(q, twice(size)), v128.load(overflow, 16));
+  v128.store(overflow, plus(v128.load(overflow, 32), furtherP), 32);
+  v128.store(overflow, plus(v128.load(overflow, 48), furtherQ), 48);
 }
 
 /** Row updates times values done so far: the machine-independent measure of the work. */
@@ -235,8 +261,8 @@ function isBelow(p: v128, q: v128, least: f64): bool {
 
 /**
  * Adds `count` names to four conditional laws. Row 0 holds each value's starting mass, every other row is zero; `steps`
- * (i32) and `weights` (three f64 a name) say where a name lands. Leaves the laws in the rows `bounds[0]..bounds[1]` and
- * the masses above `top` in `overflow`. A name multiplies a law by (1 − p)(1 + odds · its landing points): the factors
+ * (i32) and `weights` (three f64 a name) say where a name lands, `sizes` its amount in steps. Leaves the laws in the rows
+ * `bounds[0]..bounds[1]`, and in `overflow` the masses above `top` and their sums of steps times mass. A name multiplies a law by (1 − p)(1 + odds · its landing points): the factors
  * 1 − p are gathered in `scale` and applied last, which saves a multiplication a row.
  */
 export function addNames(
@@ -246,6 +272,7 @@ export function addNames(
   rows: usize,
   steps: usize,
   weights: usize,
+  sizes: usize,
   probabilities: usize,
   overflow: usize,
   bounds: usize,
@@ -255,7 +282,9 @@ export function addNames(
   let done: i32 = 0;
   let scaleP = twice(1);
   let scaleQ = twice(1);
+  let hasSpilled = false;
   clear(overflow);
+  clear(overflow + 32);
   for (let i: i32 = 0; i < count; i++) {
     const step = load<i32>(steps + (<usize>i << 2));
     const weight = weights + <usize>i * 24;
@@ -266,8 +295,13 @@ export function addNames(
     let p = load2(at);
     let q = load2(at + 16);
     if (!v128.any_true(v128.or(p, q))) continue;
-    if (high + step + reach > top)
-      spill(rows, low, high, top, step, reach, times(scaleP, p), times(scaleQ, q), weight, overflow);
+    const size = load<f64>(sizes + (<usize>i << 3));
+    if (hasSpilled) moveOverflow(overflow, size, p, q);
+    if (high + step + reach > top) {
+      const base = size - second - 2 * third;
+      spill(rows, low, high, top, step, reach, base, times(scaleP, p), times(scaleQ, q), weight, overflow);
+      hasSpilled = true;
+    }
     const stayP = f64x2.sub(twice(1), p);
     const stayQ = f64x2.sub(twice(1), q);
     high = min(high + step + reach, top);
