@@ -1,4 +1,6 @@
 import { queries as activityQueries } from "./activity/queries";
+import { commands as alternativeCommands } from "./alternatives/commands";
+import { queries as alternativeQueries } from "./alternatives/queries";
 import { commands as dealCommands } from "./deals/commands";
 import { queries as dealQueries } from "./deals/queries";
 import { commands as discussionCommands } from "./discussion/commands";
@@ -12,6 +14,8 @@ import { commands as poolCommands } from "./pools/commands";
 import { queries as poolQueries } from "./pools/queries";
 import { commands as runCommands } from "./runs/commands";
 import { queries as runQueries } from "./runs/queries";
+import { commands as scenarioCommands } from "./scenarios/commands";
+import { queries as scenarioQueries } from "./scenarios/queries";
 import { commands as workspaceCommands } from "./workspaces/commands";
 import { queries as workspaceQueries } from "./workspaces/queries";
 
@@ -26,6 +30,10 @@ const rooms = [
   dealQueries,
   runCommands,
   runQueries,
+  scenarioCommands,
+  scenarioQueries,
+  alternativeCommands,
+  alternativeQueries,
   jobCommands,
   jobQueries,
   discussionCommands,

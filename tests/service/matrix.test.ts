@@ -167,6 +167,42 @@ const rows: Record<string, Row> = {
     expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
     input: ({ workspaceId }) => ({ workspaceId, runId: "none" }),
   },
+  "scenarios.create": {
+    expected: ["ok", "conflict", "forbidden", "forbidden", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, name: "Wider", content: { shock: { scale: 2 } } }),
+  },
+  "scenarios.save": {
+    expected: ["notFound", "notFound", "forbidden", "forbidden", "notFound"],
+    input: ({ workspaceId }) => ({
+      workspaceId,
+      scenarioId: "none",
+      version: 1,
+      name: "Wider",
+      content: { shock: {} },
+    }),
+  },
+  "scenarios.remove": {
+    expected: ["notFound", "notFound", "forbidden", "forbidden", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, scenarioId: "none" }),
+  },
+  "scenarios.list": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
+  "alternatives.keep": {
+    expected: editors,
+    input: ({ workspaceId, dealId }) => ({
+      workspaceId,
+      dealId,
+      name: "Thicker",
+      content: { classes: aDealContent.classes },
+    }),
+  },
+  "alternatives.remove": {
+    expected: ["notFound", "notFound", "forbidden", "forbidden", "notFound"],
+    input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, alternativeId: "none" }),
+  },
+  "alternatives.list": {
+    expected: everyone,
+    input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }),
+  },
   "jobs.start": {
     expected: workers,
     input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, request: aRequest(), grid: aGrid }),
