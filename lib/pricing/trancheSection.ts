@@ -138,14 +138,12 @@ function strikeProbabilities(valuation: Valuation, input: TrancheInput, warnings
   const { dependence, laws, portfolio } = valuation;
   const last = portfolio.times.length - 1;
   const { attachment, detachment } = input;
-  const lawAt = (strike: number) => {
-    const used =
-      dependence.kind === "common"
-        ? dependence.dependence
-        : ({ kind: "flat", rho: dependence.rhoAt(strike) } as const);
-    return laws.whole("loss", last, used, laws.isExact);
-  };
   const realised = portfolio.realisedLoss;
+  const lawAt = (strike: number) => {
+    if (dependence.kind === "common") return laws.whole("loss", last, dependence.dependence, laws.isExact);
+    const own = { kind: "flat", rho: dependence.rhoAt(strike) } as const;
+    return laws.atStrike("loss", last, own, strike - realised, laws.isExact);
+  };
   const above = realised > attachment + 1e-11 ? 1 : lawAt(attachment).above(attachment - realised);
   const from = realised >= detachment - 1e-11 ? 1 : lawAt(detachment).from(detachment - realised);
   for (const strike of [attachment, detachment]) {

@@ -1,22 +1,10 @@
 import { normalCdf, normalQuantile } from "../maths/normal";
 import { type AmountGrid, amountGrid, exactUnit } from "./amountGrid";
+import { atomic, certainlyNothing } from "./atomicDistribution";
 import { comonotonicLaw } from "./comonotonicLaw";
-import {
-  type LargePool,
-  largePoolAbove,
-  largePoolExcess,
-  largePoolFrom,
-  largePoolQuantile,
-  largePoolSquare,
-} from "./largePool";
-import {
-  type AmountLaw,
-  expectedBetween,
-  expectedSquareBetween,
-  isAtom,
-  probabilityAbove,
-  probabilityFrom,
-} from "./lossLaw";
+import type { Distribution } from "./distributionQuestions";
+import { type Asked, factorDistribution, WHOLE } from "./factorDistribution";
+import { type LargePool, largePoolDistribution } from "./largePool";
 import { oneFactorLaw } from "./oneFactorLaw";
 import type { Portfolio } from "./portfolio";
 import { type SectorGroups, sectorLaw } from "./sectorLaw";
@@ -24,6 +12,8 @@ import { MOST_SUBSET_NAMES, subsetLaw } from "./subsetLaw";
 
 /** Above this correlation the law is that of correlation one, to within 1e-7 of any expected loss. */
 const COMONOTONIC = 1 - 1e-14;
+
+export type { Distribution } from "./distributionQuestions";
 
 /** Which sum of default amounts is meant. */
 export type AmountKind = "loss" | "recovery";
@@ -34,29 +24,12 @@ export type Dependence =
   | { readonly kind: "loadings" }
   | { readonly kind: "sector"; readonly within: number; readonly between: number };
 
-/** The law of the live names' sum of amounts at one date, in the questions a tranche asks of it. */
-export interface Distribution {
-  /** E[min((X − A)⁺, D − A)]. */
-  between(attachment: number, detachment: number): number;
-  /** E[min((X − A)⁺, D − A)²]. */
-  squareBetween(attachment: number, detachment: number): number;
-  above(strike: number): number;
-  from(strike: number): number;
-  /** Whether P(X > K) and P(X ≥ K) differ. */
-  isAtom(strike: number): boolean;
-  /** The atoms, or null for a law without (the large pool). */
-  readonly atoms: AmountLaw | null;
-  /** Smallest amount x with P(X ≤ x) ≥ level. */
-  quantile(level: number): number;
-  /** Bound on the error of E[min(X, K)] from quadrature. */
-  readonly error: number;
-}
-
 /** Lays amounts on grids and keeps the laws that were asked for. */
 export class PoolLaws {
   private readonly grids = new Map<string, AmountGrid | null>();
   private readonly groups: SectorGroups;
   private readonly kept = new Map<string, Distribution>();
+  private readonly minima = new Map<string, number>();
   /** Conditional laws worked out so far: the machine-independent measure of the work. */
   evaluations = 0;
 
@@ -91,13 +64,28 @@ export class PoolLaws {
 
   /** The whole law at date j. `smooth` laws keep mean and variance; the others have no negative mass. */
   whole(kind: AmountKind, j: number, dependence: Dependence, smooth = true): Distribution {
-    return this.distribution(kind, j, dependence, this.strikes[kind], Number.POSITIVE_INFINITY, smooth);
+    return this.keptLaw(`${kind} ${j} ${keyOf(dependence)} ${smooth}`, () =>
+      this.make(kind, j, dependence, { strikes: this.strikes[kind], smooth }),
+    );
+  }
+
+  /** The law at date j for questions about one strike that stands alone at this dependence, as under a base curve. */
+  atStrike(kind: AmountKind, j: number, dependence: Dependence, strike: number, smooth = true): Distribution {
+    return this.keptLaw(`${kind} ${j} ${keyOf(dependence)} ${smooth} ${strike}`, () =>
+      this.make(kind, j, dependence, { strikes: [strike], smooth }),
+    );
   }
 
   /** E[min(X, K)] at date j, only as much of the law worked out as the strike needs. */
   expectedMinimum(kind: AmountKind, j: number, dependence: Dependence, strike: number): number {
     if (strike <= 0) return 0;
-    return this.distribution(kind, j, dependence, [strike], strike, true).between(0, strike);
+    const key = `${kind} ${j} ${keyOf(dependence)} ${strike}`;
+    let found = this.minima.get(key);
+    if (found === undefined) {
+      found = this.minimum(kind, j, dependence, strike);
+      this.minima.set(key, found);
+    }
+    return found;
   }
 
   /** The same pool with laws of its own, to be dropped after use: a search over correlations keeps nothing. */
@@ -109,54 +97,41 @@ export class PoolLaws {
 
   /** E[min(X, K)] of the loss at date j and a correlation that will not be asked for again: nothing is kept. */
   expectedMinimumOnce(j: number, rho: number, strike: number): number {
-    return strike <= 0
-      ? 0
-      : this.make("loss", j, { kind: "flat", rho }, [strike], strike, true).between(0, strike);
+    return strike <= 0 ? 0 : this.minimum("loss", j, { kind: "flat", rho }, strike);
   }
 
-  private distribution(
-    kind: AmountKind,
-    j: number,
-    dependence: Dependence,
-    strikes: readonly number[],
-    upTo: number,
-    smooth: boolean,
-  ): Distribution {
-    const key = `${kind} ${j} ${keyOf(dependence)} ${upTo} ${smooth}`;
+  private keptLaw(key: string, make: () => Distribution): Distribution {
     let found = this.kept.get(key);
     if (!found) {
-      found = this.make(kind, j, dependence, strikes, upTo, smooth);
+      found = make();
       this.kept.set(key, found);
     }
     return found;
   }
 
-  private make(
-    kind: AmountKind,
-    j: number,
-    dependence: Dependence,
-    strikes: readonly number[],
-    upTo: number,
-    smooth: boolean,
-  ): Distribution {
+  private minimum(kind: AmountKind, j: number, dependence: Dependence, strike: number): number {
+    return this.make(kind, j, dependence, { strikes: [strike], smooth: true, minimumOnly: true }).between(
+      0,
+      strike,
+    );
+  }
+
+  private make(kind: AmountKind, j: number, dependence: Dependence, asked: Asked): Distribution {
     const { thresholds } = this.portfolio;
     const amounts = this.amountsOf(kind);
+    const { strikes, smooth } = asked;
     if (this.law.kind === "largePool") return largePoolDistribution(this.singleClass(amounts, j, dependence));
     const at = thresholds[j]!;
     if (j === 0 || amounts.length === 0 || amounts.every((amount) => amount === 0)) return certainlyNothing();
     if (dependence.kind === "flat" && dependence.rho > COMONOTONIC)
       return atomic(comonotonicLaw(amounts, at));
     if (dependence.kind === "sector") return this.sectorDistribution(kind, dependence, at, strikes, smooth);
-    const loadings = this.loadingsOf(dependence);
+    const names = { thresholds: at, loadings: this.loadingsOf(dependence) };
     const grid = this.gridOf(kind, smooth ? 3 : 2);
-    if (grid === null) return atomic(subsetLaw(amounts, { thresholds: at, loadings }, strikes));
-    const law = oneFactorLaw(
-      grid,
-      { thresholds: at, loadings },
-      { strikes, upTo, minimumOnly: Number.isFinite(upTo) },
-    );
-    this.evaluations += law.evaluations;
-    return atomic(law);
+    if (grid === null) return atomic(subsetLaw(amounts, names, strikes));
+    return factorDistribution(grid, names, amounts, asked, (evaluations) => {
+      this.evaluations += evaluations;
+    });
   }
 
   private sectorDistribution(
@@ -171,9 +146,7 @@ export class PoolLaws {
     const grid = this.gridOf(kind, smooth ? 3 : 2) ?? amountGrid(amounts, smooth ? 3 : 2);
     if (within === between) {
       const loadings = new Float64Array(amounts.length).fill(Math.sqrt(within));
-      return atomic(
-        oneFactorLaw(grid, { thresholds, loadings }, { strikes, upTo: Number.POSITIVE_INFINITY }),
-      );
+      return atomic(oneFactorLaw(grid, { thresholds, loadings }, { strikes, upTo: WHOLE }));
     }
     return atomic(sectorLaw(grid, thresholds, this.groups, { within, between }, strikes));
   }
@@ -222,45 +195,4 @@ function keyOf(dependence: Dependence): string {
   if (dependence.kind === "flat") return `flat ${dependence.rho}`;
   if (dependence.kind === "sector") return `sector ${dependence.within} ${dependence.between}`;
   return "loadings";
-}
-
-function certainlyNothing(): Distribution {
-  return atomic({ amounts: new Float64Array([0]), masses: new Float64Array([1]), overflow: 0, error: 0 });
-}
-
-function atomic(law: AmountLaw): Distribution {
-  return {
-    between: (attachment, detachment) => expectedBetween(law, attachment, detachment),
-    squareBetween: (attachment, detachment) => expectedSquareBetween(law, attachment, detachment),
-    above: (strike) => probabilityAbove(law, strike),
-    from: (strike) => probabilityFrom(law, strike),
-    isAtom: (strike) => isAtom(law, strike),
-    atoms: law,
-    quantile: (level) => atomicQuantile(law, level),
-    error: law.error,
-  };
-}
-
-function atomicQuantile(law: AmountLaw, level: number): number {
-  const { amounts, masses } = law;
-  let above = law.overflow;
-  for (let i = amounts.length - 1; i >= 0; i--) {
-    above += masses[i]!;
-    if (above > 1 - level + 1e-14) return amounts[i]!;
-  }
-  return 0;
-}
-
-function largePoolDistribution(pool: LargePool): Distribution {
-  return {
-    between: (attachment, detachment) =>
-      largePoolExcess(pool, attachment) - largePoolExcess(pool, detachment),
-    squareBetween: (attachment, detachment) => largePoolSquare(pool, attachment, detachment),
-    above: (strike) => largePoolAbove(pool, strike),
-    from: (strike) => largePoolFrom(pool, strike),
-    isAtom: () => false,
-    atoms: null,
-    quantile: (level) => largePoolQuantile(pool, level),
-    error: 1e-15,
-  };
 }

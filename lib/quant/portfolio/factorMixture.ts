@@ -18,16 +18,18 @@ export interface Probes {
   /** E[min(X, K)] counts in steps times this. */
   readonly unit: number;
   readonly accuracy: PanelAccuracy;
-  /** E[X] where the top leaves nothing out: an answer that is known, and must come out of the mixture. */
+  /** E[X] over the interval, what lies above the top included: it is known, and must come out of the mixture. */
   readonly mean: number | null;
   /** Sizes below which probes are not held to the relative standard. */
   readonly floor: number;
 }
 
-/** The mixed law: masses at steps 0.., mass above the top, and the estimated error of the worst E[min(X, K)]. */
+/** The mixed law: masses at steps 0.., what lies above the top, and the estimated error of the worst E[min(X, K)]. */
 export interface MixedLaw {
   readonly masses: Float64Array;
   overflow: number;
+  /** Σ step · mass above the top. */
+  readonly overflowMoment: number;
   readonly error: number;
   readonly evaluations: number;
 }
@@ -105,10 +107,10 @@ function panelOf(
   return { from, to, depth, law, ...probeValues(law, top, probes) };
 }
 
-/** Each probe's sum over the panel, and its estimated error: E[min] at the strikes, then the tails. */
-function probeValues(law: PanelLaw, top: number, { strikes, tails, unit }: Probes) {
+/** Each probe's sum over the panel, and its estimated error: E[min] at the strikes, the tails, the mean. */
+function probeValues(law: PanelLaw, top: number, { mean, strikes, tails, unit }: Probes) {
   const count = strikes.length;
-  const values = new Float64Array(count + tails);
+  const values = new Float64Array(count + tails + (mean === null ? 0 : 1));
   const errors = new Float64Array(values.length);
   const above = law.overflow.slice();
   const minimum = new Float64Array(PANEL_POINTS);
@@ -126,13 +128,24 @@ function probeValues(law: PanelLaw, top: number, { strikes, tails, unit }: Probe
     values[count + i] = above.reduce((sum, term) => sum + term, 0);
     errors[count + i] = legendreError(above, PROBE);
   }
+  if (mean !== null) {
+    const all = law.overflowMoments.map((above, k) => unit * (above + segmentSum(law.segmentMoments, k)));
+    values[count + tails] = all.reduce((sum, term) => sum + term, 0);
+    errors[count + tails] = legendreError(all, PROBE);
+  }
   return { values, errors };
 }
 
-/** How far the mixture's mean, the last strike's E[min], lies from the one that is known. */
-function missesMean(panels: readonly Panel[], { mean, strikes }: Probes): number {
+function segmentSum(segments: Float64Array, k: number): number {
+  let sum = 0;
+  for (let i = k; i < segments.length; i += PANEL_POINTS) sum += segments[i]!;
+  return sum;
+}
+
+/** How far the mixture's mean lies from the one that is known. */
+function missesMean(panels: readonly Panel[], { mean }: Probes): number {
   if (mean === null) return 0;
-  return Math.abs(panels.reduce((sum, { values }) => sum + values[strikes.length - 1]!, 0) - mean);
+  return Math.abs(panels.reduce((sum, { values }) => sum + values[values.length - 1]!, 0) - mean);
 }
 
 function allowedErrors(
@@ -161,9 +174,11 @@ function worstError(panels: readonly Panel[], { strikes }: Probes): number {
 function summed(panels: readonly Panel[], top: number) {
   const masses = new Float64Array(top + 1);
   let overflow = 0;
+  let overflowMoment = 0;
   for (const { law } of panels) {
     for (let k = 0; k < law.masses.length; k++) masses[law.low + k]! += law.masses[k]!;
     for (const part of law.overflow) overflow += part;
+    for (const part of law.overflowMoments) overflowMoment += part;
   }
-  return { masses, overflow };
+  return { masses, overflow, overflowMoment };
 }

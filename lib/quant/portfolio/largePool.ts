@@ -1,6 +1,7 @@
 import { bivariateNormalCdf } from "../maths/bivariateNormal";
 import { normalCdf, normalDensity, normalQuantile } from "../maths/normal";
 import { gaussLegendre } from "../maths/quadrature";
+import type { Distribution } from "./distributionQuestions";
 
 /** A pool of infinitely many alike names: default threshold c, recovery R, flat correlation ρ (Vasicek 1987/2002). */
 export interface LargePool {
@@ -86,4 +87,19 @@ export function largePoolQuantile(pool: LargePool, level: number): number {
   if (correlation === 1) return level > 1 - normalCdf(threshold) ? lossGivenDefault : 0;
   const scale = Math.sqrt(1 - correlation);
   return lossGivenDefault * normalCdf((threshold + Math.sqrt(correlation) * normalQuantile(level)) / scale);
+}
+
+/** The questions answered in closed form. */
+export function largePoolDistribution(pool: LargePool): Distribution {
+  return {
+    between: (attachment, detachment) =>
+      largePoolExcess(pool, attachment) - largePoolExcess(pool, detachment),
+    squareBetween: (attachment, detachment) => largePoolSquare(pool, attachment, detachment),
+    above: (strike) => largePoolAbove(pool, strike),
+    from: (strike) => largePoolFrom(pool, strike),
+    isAtom: () => false,
+    atoms: null,
+    quantile: (level) => largePoolQuantile(pool, level),
+    error: 1e-15,
+  };
 }

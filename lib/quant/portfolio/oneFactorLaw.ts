@@ -2,10 +2,10 @@ import { Recursion, type RecursionNames } from "../kernel/recursion";
 import type { MixtureAccuracy } from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
 import type { AmountGrid } from "./amountGrid";
-import { mixedLaw, type PanelAccuracy } from "./factorMixture";
+import { type MixedLaw, mixedLaw, type PanelAccuracy } from "./factorMixture";
 import type { FactorNames } from "./factorNames";
 import type { AmountLaw } from "./lossLaw";
-import { LOWEST_UNSETTLED, unsettledInterval } from "./settledFactor";
+import { LOWEST_UNSETTLED, momentBelow, unsettledInterval } from "./settledFactor";
 import { transitionPanels } from "./transitionPanels";
 
 /** Accuracy of the mixture over the factor: E[min(X, K)] absolutely, tail probabilities relatively. */
@@ -44,12 +44,13 @@ export function oneFactorLaw(
   { strikes, upTo, minimumOnly = false, floor = 0 }: LawRequest,
 ): AmountLaw & { readonly evaluations: number } {
   const top = Math.min(grid.top, Math.ceil(Math.min(upTo, 2) / grid.unit + 1e-9));
-  const probed = [...new Set([...strikes.map((strike) => strike / grid.unit), top])]
+  const probed = [...new Set(strikes.map((strike) => strike / grid.unit))]
     .filter((strike) => strike > 0 && strike <= top)
     .sort((one, other) => one - other);
   const breaks = Int32Array.from([0, ...probed], (strike) => Math.ceil(strike - 1e-9));
   const negligible = minimumOnly ? NEGLIGIBLE_IN_MINIMUM : NEGLIGIBLE;
-  const recursion = new Recursion(recursionNames(grid, names), { top, breaks, negligible });
+  const flat = recursionNames(grid, names);
+  const recursion = new Recursion(flat, { top, breaks, negligible });
   if (names.loadings.every((loading) => loading === 0)) return independentLaw(grid, recursion, top);
   const isMonotone = names.loadings.every((loading) => loading >= 0);
   const largest = grid.sizes.reduce((most, size) => Math.max(most, size), 0);
@@ -60,17 +61,31 @@ export function oneFactorLaw(
     isMonotone,
     minimumOnly ? SETTLED_MINIMUM : SETTLED_TAIL,
   );
+  const below = minimumOnly ? 0 : momentBelow(recursion, flat, low);
   const law = mixedLaw(recursion, top, transitionPanels(recursion, low, high), {
     strikes: probed,
-    tails: minimumOnly ? 0 : probed.filter((strike) => strike < top).length,
+    tails: minimumOnly ? 0 : probed.length,
     unit: grid.unit,
     accuracy: minimumOnly ? { absolute: 1e-12, relative: Number.POSITIVE_INFINITY } : MIXTURE_ACCURACY,
-    mean: top === grid.top ? grid.unit * meanSteps(grid, names) : null,
+    mean: minimumOnly ? null : grid.unit * (meanSteps(grid, names) - below),
     floor,
   });
   law.masses[0]! += normalCdf(-high);
   if (low > LOWEST_UNSETTLED) law.overflow += normalCdf(low);
-  return { amounts: gridAmounts(grid, top), ...law };
+  if (minimumOnly) return { amounts: gridAmounts(grid, top), ...law };
+  return closedAbove(grid, top, law, law.overflowMoment + below);
+}
+
+/** A cut law with one atom above the top that has the mass and the mean of all that lies there; a whole law as it is. */
+function closedAbove(grid: AmountGrid, top: number, law: MixedLaw, moment: number) {
+  if (top === grid.top) return { amounts: gridAmounts(grid, top), ...law };
+  const { error, evaluations, overflow } = law;
+  const place = overflow > 0 ? Math.max(top + 1, moment / overflow) : top + 1;
+  const amounts = Float64Array.from([...gridAmounts(grid, top), place * grid.unit]);
+  const masses = new Float64Array(top + 2);
+  masses.set(law.masses);
+  masses[top + 1] = overflow;
+  return { amounts, masses, overflow: 0, error, evaluations };
 }
 
 /** Names at one date as the recursion takes them. */
@@ -93,10 +108,17 @@ function meanSteps(grid: AmountGrid, { thresholds }: FactorNames): number {
 function independentLaw(grid: AmountGrid, recursion: Recursion, top: number) {
   const weights = new Float64Array(16);
   weights[0] = 1;
-  const { low, masses: kept, overflow } = recursion.panel(new Float64Array(16), weights);
+  const { low, masses: kept, overflow, overflowMoments } = recursion.panel(new Float64Array(16), weights);
   const masses = new Float64Array(top + 1);
   masses.set(kept, low);
-  return { amounts: gridAmounts(grid, top), masses, overflow: overflow[0]!, error: 0, evaluations: 1 };
+  const law = {
+    masses,
+    overflow: overflow[0]!,
+    overflowMoment: overflowMoments[0]!,
+    error: 0,
+    evaluations: 1,
+  };
+  return closedAbove(grid, top, law, law.overflowMoment);
 }
 
 function gridAmounts(grid: AmountGrid, top: number): Float64Array {

@@ -1,6 +1,7 @@
-import type { ConditionalMoments, Recursion } from "../kernel/recursion";
+import type { ConditionalMoments, Recursion, RecursionNames } from "../kernel/recursion";
 import { exp } from "../maths/elementary";
-import { normalCdf } from "../maths/normal";
+import { normalCdf, normalDensity } from "../maths/normal";
+import { gaussLegendre } from "../maths/quadrature";
 
 /** The factor interval on which a conditional law is not settled, and what the mass below it is. */
 export interface UnsettledInterval {
@@ -12,6 +13,7 @@ export interface UnsettledInterval {
 export const LOWEST_UNSETTLED = -9.5;
 const LOWEST = LOWEST_UNSETTLED;
 const STEP = 0.25;
+const RULE = gaussLegendre(16);
 /** Share of the mean that may be left out above the interval. */
 const NO_MORE_LOSS = 1e-14;
 
@@ -56,6 +58,25 @@ export function unsettledInterval(
     high = m + 2 * STEP;
   }
   return { low, high };
+}
+
+/** Σ step · mass of what lies at factor values below `low`, where the law itself is not laid out: ∫ φ(m) E[X | m] dm. */
+export function momentBelow(recursion: Recursion, { slopes }: RecursionNames, low: number): number {
+  const steepest = slopes.reduce((most, slope) => Math.max(most, Math.abs(slope)), 0.5);
+  const panels = Math.ceil((low - LOWEST) / Math.min(2, 4 / steepest));
+  const half = (0.5 * (low - LOWEST)) / panels;
+  let sum = 0;
+  for (let panel = 0; panel < panels; panel++) {
+    const centre = LOWEST + (2 * panel + 1) * half;
+    for (let k = 0; k < RULE.nodes.length; k += 2) {
+      const one = centre + half * RULE.nodes[k]!;
+      const other = centre + half * RULE.nodes[k + 1]!;
+      const [at, next] = recursion.momentsAt(one, other);
+      sum += half * RULE.weights[k]! * normalDensity(one) * at.mean;
+      sum += half * RULE.weights[k + 1]! * normalDensity(other) * next.mean;
+    }
+  }
+  return sum;
 }
 
 /** P(X ≤ top) ≤ exp(−x²/(2(σ² + b x/3))) with x = mean − top > 0. */

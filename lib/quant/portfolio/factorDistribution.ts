@@ -1,0 +1,82 @@
+import { normalCdf } from "../maths/normal";
+import type { AmountGrid } from "./amountGrid";
+import { atomic } from "./atomicDistribution";
+import type { Distribution } from "./distributionQuestions";
+import type { FactorNames } from "./factorNames";
+import { oneFactorLaw } from "./oneFactorLaw";
+
+/** What a distribution will be asked. */
+export interface Asked {
+  /** Strikes of the live sum at which it must be accurate. */
+  readonly strikes: readonly number[];
+  /** Keep mean and variance of amounts on the grid; else no negative mass. */
+  readonly smooth: boolean;
+  /** Only E[min(X, K)] at the last strike is wanted. */
+  readonly minimumOnly?: boolean;
+}
+
+/** A law without a cut. */
+export const WHOLE = Number.POSITIVE_INFINITY;
+
+/** A strike this close below the largest sum is not below it: the sum was rounded. */
+const SAME = 1e-11;
+
+/**
+ * The one-factor law, worked out as far as it is asked: questions about known strikes take a law cut at the highest of them,
+ * with one atom of the right mean above; a tranche up to the largest sum takes the known mean; all else takes the whole law.
+ */
+export function factorDistribution(
+  grid: AmountGrid,
+  names: FactorNames,
+  amounts: readonly number[],
+  { strikes, minimumOnly = false }: Asked,
+  count: (evaluations: number) => void,
+): Distribution {
+  const most = amounts.reduce((sum, amount) => sum + amount, 0);
+  const inside = strikes.filter((strike) => strike > 0 && strike < most - SAME);
+  const known = new Set(inside);
+  const law = (upTo: number) => {
+    const found = oneFactorLaw(grid, names, { strikes: inside, upTo, minimumOnly });
+    count(found.evaluations);
+    return atomic(found);
+  };
+  let wholeLaw: Distribution | null = null;
+  let cutLaw: Distribution | null = null;
+  const whole = () => {
+    wholeLaw ??= law(WHOLE);
+    return wholeLaw;
+  };
+  const cut = () => {
+    if (inside.length === 0) return whole();
+    cutLaw ??= law(Math.max(...inside));
+    return cutLaw;
+  };
+  const isKnown = (strike: number) => known.has(strike) || strike <= 0;
+  const isBeyond = (strike: number) => strike >= most - SAME;
+  const at = (strike: number) => (known.has(strike) ? cut() : whole());
+  return {
+    between: (attachment, detachment) => {
+      if (isBeyond(attachment)) return 0;
+      if (attachment <= 0 && isBeyond(detachment)) return mean(amounts, names) - Math.min(attachment, 0);
+      if (isKnown(attachment) && (isKnown(detachment) || isBeyond(detachment)))
+        return cut().between(attachment, detachment);
+      return whole().between(attachment, detachment);
+    },
+    squareBetween: (attachment, detachment) =>
+      (isKnown(attachment) && isKnown(detachment) ? cut() : whole()).squareBetween(attachment, detachment),
+    above: (strike) => (isBeyond(strike) ? 0 : at(strike).above(strike)),
+    from: (strike) => at(strike).from(strike),
+    isAtom: (strike) => at(strike).isAtom(strike),
+    quantile: (level) => whole().quantile(level),
+    get atoms() {
+      return whole().atoms;
+    },
+    get error() {
+      return cut().error;
+    },
+  };
+}
+
+function mean(amounts: readonly number[], { thresholds }: FactorNames): number {
+  return amounts.reduce((sum, amount, i) => sum + amount * normalCdf(thresholds[i]!), 0);
+}
