@@ -1,4 +1,10 @@
 import { attribute } from "../pricing/attribution";
+import {
+  type MarketDriversAnswer,
+  marketDrivers,
+  type NameDriversAnswer,
+  nameDrivers,
+} from "../pricing/drivers";
 import type { PricingRequest } from "../pricing/request";
 import type { Shock } from "../pricing/shock";
 import { type ShockedFigures, shockedFigures } from "../pricing/shockedFigures";
@@ -11,6 +17,12 @@ export const tasks = {
   /** Every class of a request after a shock. */
   shocked: ({ request, shock }: { readonly request: unknown; readonly shock: Shock }): ShockedFigures =>
     shockedFigures(request, shock),
+  /** What moves every class, the market's inputs first, then name by name. */
+  marketDrivers: (request: unknown): MarketDriversAnswer => marketDrivers(request),
+  nameDrivers: (input: {
+    readonly request: unknown;
+    readonly places: readonly number[];
+  }): NameDriversAnswer => nameDrivers(input.request, input.places),
   attribute: ({ before, after }: { before: PricingRequest; after: PricingRequest }) =>
     attribute(before, after),
 };

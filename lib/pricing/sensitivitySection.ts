@@ -3,11 +3,9 @@ import { shiftZeroRates } from "../quant/market/discountCurve";
 import { defaultedName } from "../quant/market/survivalCurve";
 import type { PortfolioName } from "../quant/portfolio/portfolio";
 import { bumpedName, type NameBump } from "./bumps";
-import type { PricingProblem } from "./problem";
 import type { SensitivityReport } from "./report";
-import type { TrancheInput } from "./request";
-import { sellerValue, valuedTranche } from "./trancheSection";
-import { type Replacements, type Valuation, valuationOf } from "./valuation";
+import { type Difference, differenceFrom, revalued, values, withCoupons } from "./revaluation";
+import { type Valuation, valuationOf } from "./valuation";
 
 const BASIS_POINT = 1e-4;
 const ONE_PERCENT = 0.01;
@@ -19,25 +17,14 @@ const ONE_PERCENT = 0.01;
 export function sensitivityReports(valuation: Valuation): SensitivityReport[] {
   const priced = withCoupons(valuation);
   const today = values(priced);
-  const difference = (moved: Valuation | null, sign = 1): (number | null)[] => {
-    const then = moved ? values(moved) : null;
-    return today.map((value, i) => {
-      const next = then?.[i];
-      return value === null || next === null || next === undefined ? null : sign * (next - value);
-    });
-  };
-  const spread01 = difference(revalued(priced, { names: allBumped(priced, { shift: BASIS_POINT }) }));
-  const recovery01 = recoveryDifference(priced, difference);
-  const correlation01 = correlationDifference(priced, difference);
-  const rate01 = difference(rateShifted(priced));
-  const carry = difference(nextDay(priced));
-  const byName = namesDifferences(priced, difference, today);
+  const market = marketDifferences(priced, today);
+  const byName = namesDifferences(priced, today);
   return today.map((_, i) => ({
-    spread01: spread01[i]!,
-    recovery01: recovery01[i]!,
-    correlation01: correlation01[i]!,
-    rate01: rate01[i]!,
-    carry1d: carry[i]!,
+    spread01: market.spread01[i]!,
+    recovery01: market.recovery01[i]!,
+    correlation01: market.correlation01[i]!,
+    rate01: market.rate01[i]!,
+    carry1d: market.carry1d[i]!,
     byName: byName.map((name) => ({
       id: name.id,
       spread01: name.spread01[i]!,
@@ -46,35 +33,30 @@ export function sensitivityReports(valuation: Valuation): SensitivityReport[] {
   }));
 }
 
-type Difference = (moved: Valuation | null, sign?: number) => (number | null)[];
-
-/** The valuation with a coupon for every tranche. */
-function withCoupons(valuation: Valuation): Valuation {
-  const tranches = valuation.request.tranches.map((tranche): TrancheInput => {
-    if (tranche.running !== undefined) return tranche;
-    const valued = valuedTranche(valuation, tranche);
-    const par = valued && valued.legs.annuity !== 0 ? valued.legs.protection / valued.legs.annuity : 0;
-    return { ...tranche, running: par };
-  });
-  return { ...valuation, request: { ...valuation.request, tranches } };
+/** What moves of the market as a whole do to every tranche of a valuation with coupons. */
+export function marketDifferences(priced: Valuation, today: readonly (number | null)[]) {
+  const difference = differenceFrom(today);
+  return {
+    spread01: spreadDifference(priced, today),
+    recovery01: recoveryDifference(priced, difference),
+    correlation01: correlationDifference(priced, difference),
+    rate01: difference(rateShifted(priced)),
+    carry1d: difference(nextDay(priced)),
+  };
 }
 
-function values(valuation: Valuation): (number | null)[] {
-  return valuation.request.tranches.map((tranche) => {
-    const valued = valuedTranche(valuation, tranche);
-    return (
-      valued && sellerValue(valued, (tranche.detachment - tranche.attachment) * valuation.portfolio.notional)
-    );
-  });
+/** Every spread +1 bp at every node. */
+export function spreadDifference(priced: Valuation, today: readonly (number | null)[]): (number | null)[] {
+  return differenceFrom(today)(revalued(priced, { names: allBumped(priced, { shift: BASIS_POINT }) }));
 }
 
-/** The request valued again with parts replaced; the base curve stays as first solved. Null when a curve cannot be built. */
-function revalued(valuation: Valuation, replacements: Replacements | null): Valuation | null {
-  if (!replacements || (replacements.names && replacements.names.length < valuation.names.length))
-    return null;
-  const problems: PricingProblem[] = [];
-  const kept = valuation.base ? { baseNodes: valuation.base.nodes } : {};
-  return valuationOf(valuation.request, problems, { market: valuation.market, ...kept, ...replacements });
+/** What a common factor on every spread does to every tranche: 1.1 is a tenth wider. */
+export function scaledDifference(
+  priced: Valuation,
+  today: readonly (number | null)[],
+  scale: number,
+): (number | null)[] {
+  return differenceFrom(today)(revalued(priced, { names: allBumped(priced, { scale }) }));
 }
 
 function allBumped({ request, names, market }: Valuation, bump: NameBump): PortfolioName[] {
@@ -117,21 +99,27 @@ function nextDay({ request }: Valuation): Valuation | null {
   return valuationOf({ ...request, pricingDate: formatDay(tomorrow) }, []);
 }
 
-interface NameDifference {
+/** What one name does to every tranche. */
+export interface NameDifference {
   readonly id: string;
   readonly spread01: (number | null)[];
   readonly jumpToDefault: (number | null)[];
 }
 
-/** Name by name; names alike in everything but their id are valued once. Names already in default have none. */
-function namesDifferences(
+/**
+ * Name by name, of all names or of those at the places given; names alike in everything but their id are valued once. Names
+ * already in default have none.
+ */
+export function namesDifferences(
   valuation: Valuation,
-  difference: Difference,
-  today: (number | null)[],
+  today: readonly (number | null)[],
+  places: readonly number[] = valuation.names.map((_, i) => i),
 ): NameDifference[] {
   const { request, names, market } = valuation;
+  const difference = differenceFrom(today);
   const known = new Map<string, Omit<NameDifference, "id">>();
-  return request.pool.map((input, i) => {
+  return places.map((i) => {
+    const input = request.pool[i]!;
     const name = names[i]!;
     if (name.curve.defaulted)
       return { id: name.id, spread01: today.map(() => null), jumpToDefault: today.map(() => null) };
@@ -154,7 +142,11 @@ function replaced(names: readonly PortfolioName[], i: number, name: PortfolioNam
 }
 
 /** Value change when name i defaults today at its recovery, the protection then paid included. */
-function jumpToDefault(valuation: Valuation, i: number, today: (number | null)[]): (number | null)[] {
+function jumpToDefault(
+  valuation: Valuation,
+  i: number,
+  today: readonly (number | null)[],
+): (number | null)[] {
   const name = { ...valuation.names[i]!, curve: defaultedName() };
   const moved = revalued(valuation, { names: replaced(valuation.names, i, name) });
   const then = moved && values(moved);

@@ -5,7 +5,8 @@ import { parSpread } from "../quant/tranche/legs";
 import { bumpedName } from "./bumps";
 import type { PricingProblem } from "./problem";
 import { checkRequest } from "./refusals";
-import type { PricingRequest, TrancheInput } from "./request";
+import type { TrancheInput } from "./request";
+import { withCoupons } from "./revaluation";
 import type { Shock } from "./shock";
 import { sellerValue, valuedTranche } from "./trancheSection";
 import { type Valuation, valuationOf } from "./valuation";
@@ -42,11 +43,11 @@ export function shockedFigures(raw: unknown, shock: Shock): ShockedFigures {
   const problems: PricingProblem[] = [];
   const before = valuationOf(checked.request, problems);
   if (!before || problems.length > 0) return { ok: false, problems };
-  const request = withCoupons(before);
+  const priced = withCoupons(before);
   const defaulted = defaultingNames(before, shock, problems);
   const names = shockedNames(before, shock, new Set(defaulted), problems);
   if (problems.length > 0) return { ok: false, problems };
-  const { moved, isHeld } = shockedValuation({ ...before, request }, shock, names, problems);
+  const { moved, isHeld } = shockedValuation(priced, shock, names, problems);
   if (!moved || problems.length > 0) return { ok: false, problems };
   const paid = moved.portfolio.realisedLoss;
   const paidBefore = before.portfolio.realisedLoss;
@@ -54,7 +55,7 @@ export function shockedFigures(raw: unknown, shock: Shock): ShockedFigures {
     ok: true,
     defaulted,
     isHeld,
-    classes: request.tranches.map((tranche) => shockedClass(moved, tranche, paid, paidBefore)),
+    classes: priced.request.tranches.map((tranche) => shockedClass(moved, tranche, paid, paidBefore)),
   };
 }
 
@@ -77,16 +78,6 @@ function shockedClass(
     expectedLoss: valued.profile.loss[valued.profile.loss.length - 1]!,
     parSpread: parSpread(valued.legs),
   };
-}
-
-/** The request with every class at a coupon: its own, else its par spread. */
-function withCoupons(valuation: Valuation): PricingRequest {
-  const tranches = valuation.request.tranches.map((tranche) => {
-    if (tranche.running !== undefined) return tranche;
-    const valued = valuedTranche(valuation, tranche);
-    return { ...tranche, running: (valued && parSpread(valued.legs)) ?? 0 };
-  });
-  return { ...valuation.request, tranches };
 }
 
 /** The names that default: those chosen, or the widest by par spread to the deal's maturity before the shock. */

@@ -1,0 +1,104 @@
+import type { PricingProblem } from "./problem";
+import { checkRequest } from "./refusals";
+import type { PricingRequest } from "./request";
+import { values, withCoupons } from "./revaluation";
+import {
+  marketDifferences,
+  type NameDifference,
+  namesDifferences,
+  scaledDifference,
+  spreadDifference,
+} from "./sensitivitySection";
+import { type Valuation, valuationOf } from "./valuation";
+
+/** The common factors on every spread that convexity is shown at. */
+export const SPREAD_SCALES = [0.5, 0.9, 1.1, 1.5] as const;
+
+/** What moves of the market do to one class's value to the protection seller, in currency; null where it has none. */
+export interface MarketDriver {
+  readonly id: string;
+  readonly notional: number;
+  readonly spread01: number | null;
+  readonly recovery01: number | null;
+  readonly correlation01: number | null;
+  readonly rate01: number | null;
+  readonly carry1d: number | null;
+  /** At the factors of SPREAD_SCALES, in their order. */
+  readonly scaled: readonly (number | null)[];
+  /**
+   * Notional of the pool contract (protection on the whole pool's loss, premium on undefaulted notional, at par) whose
+   * spread 01 is the class's, per unit notional of the class.
+   */
+  readonly hedgeRatio: number | null;
+}
+
+export type MarketDriversAnswer =
+  | { readonly ok: true; readonly classes: readonly MarketDriver[] }
+  | { readonly ok: false; readonly problems: readonly PricingProblem[] };
+
+export type NameDriversAnswer =
+  | { readonly ok: true; readonly names: readonly NameDifference[] }
+  | { readonly ok: false; readonly problems: readonly PricingProblem[] };
+
+/** What drives every class besides single names: spreads, recovery, correlation, rates, time, and the pool as its hedge. */
+export function marketDrivers(raw: unknown): MarketDriversAnswer {
+  const read = readyValuation(raw);
+  if (!read.ok) return read;
+  const { priced, today } = read;
+  const market = marketDifferences(priced, today);
+  const scaled = SPREAD_SCALES.map((scale) => scaledDifference(priced, today, scale));
+  const pool = poolSpread01(priced.request);
+  const { notional } = priced.portfolio;
+  const classes = priced.request.tranches.map(({ id, attachment, detachment }, i) => {
+    const own = (detachment - attachment) * notional;
+    const spread01 = market.spread01[i]!;
+    const ratio =
+      spread01 === null || pool === null || pool === 0 ? null : spread01 / own / (pool / notional);
+    return {
+      id,
+      notional: own,
+      spread01,
+      recovery01: market.recovery01[i]!,
+      correlation01: market.correlation01[i]!,
+      rate01: market.rate01[i]!,
+      carry1d: market.carry1d[i]!,
+      scaled: scaled.map((row) => row[i]!),
+      hedgeRatio: ratio,
+    };
+  });
+  return { ok: true, classes };
+}
+
+/** What the names at these places of the pool do to every class: their own spread 01 and jump to default. */
+export function nameDrivers(raw: unknown, places: readonly number[]): NameDriversAnswer {
+  const read = readyValuation(raw);
+  if (!read.ok) return read;
+  return { ok: true, names: namesDifferences(read.priced, read.today, places) };
+}
+
+function readyValuation(
+  raw: unknown,
+):
+  | { ok: true; priced: Valuation; today: (number | null)[] }
+  | { ok: false; problems: readonly PricingProblem[] } {
+  const checked = checkRequest(raw);
+  if (!checked.ok) return checked;
+  const problems: PricingProblem[] = [];
+  const valuation = valuationOf(checked.request, problems);
+  if (!valuation || problems.length > 0) return { ok: false, problems };
+  const priced = withCoupons(valuation);
+  return { ok: true, priced, today: values(priced) };
+}
+
+/** The pool contract's spread 01 in currency. What the whole pool loses does not depend on correlation. */
+function poolSpread01(request: PricingRequest): number | null {
+  const tranche = { id: "pool", attachment: 0, detachment: 1, recoveryPaydown: true };
+  const read = readyValuation({
+    ...request,
+    correlation: { kind: "flat", rho: 0 },
+    tranches: [tranche],
+    nthToDefault: [],
+    include: [],
+  });
+  return read.ok ? (spreadDifference(read.priced, read.today)[0] ?? null) : null;
+}
