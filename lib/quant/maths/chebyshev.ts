@@ -39,3 +39,15 @@ export function chebyshevValue(points: readonly number[], values: ArrayLike<numb
 export function correlationOfAngle(u: number): number {
   return (1 - cosinePi(u)) / 2;
 }
+
+/** u in [0, 1] with sin²(πu/2) = ρ, by bisection to the last bits. */
+export function angleOfCorrelation(rho: number): number {
+  let low = 0;
+  let high = 1;
+  for (let step = 0; step < 52; step++) {
+    const middle = 0.5 * (low + high);
+    if (correlationOfAngle(middle) < rho) low = middle;
+    else high = middle;
+  }
+  return rho <= 0 ? 0 : rho >= 1 ? 1 : 0.5 * (low + high);
+}

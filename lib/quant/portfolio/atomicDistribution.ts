@@ -2,6 +2,7 @@ import type { Distribution } from "./distributionQuestions";
 import {
   type AmountLaw,
   expectedBetween,
+  expectedMinima,
   expectedSquareBetween,
   isAtom,
   probabilityAbove,
@@ -17,6 +18,7 @@ export function certainlyNothing(): Distribution {
 export function atomic(law: AmountLaw): Distribution {
   return {
     between: (attachment, detachment) => expectedBetween(law, attachment, detachment),
+    minima: (strikes) => expectedMinima(law, strikes),
     squareBetween: (attachment, detachment) => expectedSquareBetween(law, attachment, detachment),
     above: (strike) => probabilityAbove(law, strike),
     from: (strike) => probabilityFrom(law, strike),

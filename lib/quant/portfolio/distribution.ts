@@ -15,6 +15,9 @@ const COMONOTONIC = 1 - 1e-14;
 
 export type { Distribution } from "./distributionQuestions";
 
+/** Where among many strikes a law is held to its accuracy. */
+const PROBED_AT = [0.02, 0.1, 0.25, 0.5, 1];
+
 /** Which sum of default amounts is meant. */
 export type AmountKind = "loss" | "recovery";
 
@@ -98,6 +101,13 @@ export class PoolLaws {
   /** E[min(X, K)] of the loss at date j and a correlation that will not be asked for again: nothing is kept. */
   expectedMinimumOnce(j: number, rho: number, strike: number): number {
     return strike <= 0 ? 0 : this.minimum("loss", j, { kind: "flat", rho }, strike);
+  }
+
+  /** The same for strikes in rising order, from one law. */
+  expectedMinimaOnce(j: number, rho: number, strikes: readonly number[]): Float64Array {
+    const probes = PROBED_AT.map((part) => strikes[Math.ceil(part * (strikes.length - 1))] ?? 0);
+    const asked = { strikes: [...new Set(probes)], smooth: true, minimumOnly: true };
+    return this.make("loss", j, { kind: "flat", rho }, asked).minima(strikes);
   }
 
   private keptLaw(key: string, make: () => Distribution): Distribution {

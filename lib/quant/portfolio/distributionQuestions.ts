@@ -4,6 +4,8 @@ import type { AmountLaw } from "./lossLaw";
 export interface Distribution {
   /** E[min((X − A)⁺, D − A)]. */
   between(attachment: number, detachment: number): number;
+  /** E[min(X, K)] at strikes in rising order. */
+  minima(strikes: readonly number[]): Float64Array;
   /** E[min((X − A)⁺, D − A)²]. */
   squareBetween(attachment: number, detachment: number): number;
   above(strike: number): number;

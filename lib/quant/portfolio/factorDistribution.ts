@@ -22,8 +22,8 @@ export const WHOLE = Number.POSITIVE_INFINITY;
 const SAME = 1e-11;
 
 /**
- * The one-factor law, worked out as far as it is asked: questions about known strikes take a law cut at the highest of them,
- * with one atom of the right mean above; a tranche up to the largest sum takes the known mean; all else takes the whole law.
+ * The one-factor law, worked out as far as it is asked: questions up to the highest strike take a law cut there, with one atom
+ * of the right mean above; a tranche up to the largest sum takes the known mean; all else takes the whole law.
  */
 export function factorDistribution(
   grid: AmountGrid,
@@ -34,7 +34,7 @@ export function factorDistribution(
 ): Distribution {
   const most = amounts.reduce((sum, amount) => sum + amount, 0);
   const inside = strikes.filter((strike) => strike > 0 && strike < most - SAME);
-  const known = new Set(inside);
+  const highest = Math.max(0, ...inside);
   const law = (upTo: number) => {
     const found = oneFactorLaw(grid, names, { strikes: inside, upTo, minimumOnly });
     count(found.evaluations);
@@ -48,22 +48,32 @@ export function factorDistribution(
   };
   const cut = () => {
     if (inside.length === 0) return whole();
-    cutLaw ??= law(Math.max(...inside));
+    cutLaw ??= law(highest);
     return cutLaw;
   };
-  const isKnown = (strike: number) => known.has(strike) || strike <= 0;
+  const isCovered = (strike: number) => strike <= highest;
   const isBeyond = (strike: number) => strike >= most - SAME;
-  const at = (strike: number) => (known.has(strike) ? cut() : whole());
+  const at = (strike: number) => (isCovered(strike) ? cut() : whole());
   return {
     between: (attachment, detachment) => {
       if (isBeyond(attachment)) return 0;
       if (attachment <= 0 && isBeyond(detachment)) return mean(amounts, names) - Math.min(attachment, 0);
-      if (isKnown(attachment) && (isKnown(detachment) || isBeyond(detachment)))
+      if (isCovered(attachment) && (isCovered(detachment) || isBeyond(detachment)))
         return cut().between(attachment, detachment);
       return whole().between(attachment, detachment);
     },
+    minima: (wanted) => {
+      const covered = wanted.filter((strike) => !isBeyond(strike));
+      const isCut = covered.every(isCovered);
+      const values = (isCut ? cut() : whole()).minima(covered);
+      const rest = covered.length < wanted.length ? mean(amounts, names) : 0;
+      return Float64Array.from(wanted, (_, k) => values[k] ?? rest);
+    },
     squareBetween: (attachment, detachment) =>
-      (isKnown(attachment) && isKnown(detachment) ? cut() : whole()).squareBetween(attachment, detachment),
+      (isCovered(attachment) && isCovered(detachment) ? cut() : whole()).squareBetween(
+        attachment,
+        detachment,
+      ),
     above: (strike) => (isBeyond(strike) ? 0 : at(strike).above(strike)),
     from: (strike) => at(strike).from(strike),
     isAtom: (strike) => at(strike).isAtom(strike),

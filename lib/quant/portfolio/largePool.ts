@@ -94,6 +94,8 @@ export function largePoolDistribution(pool: LargePool): Distribution {
   return {
     between: (attachment, detachment) =>
       largePoolExcess(pool, attachment) - largePoolExcess(pool, detachment),
+    minima: (strikes) =>
+      Float64Array.from(strikes, (strike) => largePoolExcess(pool, 0) - largePoolExcess(pool, strike)),
     squareBetween: (attachment, detachment) => largePoolSquare(pool, attachment, detachment),
     above: (strike) => largePoolAbove(pool, strike),
     from: (strike) => largePoolFrom(pool, strike),

@@ -28,6 +28,24 @@ export function expectedMinimum(law: AmountLaw, strike: number): number {
   return below + strike * above;
 }
 
+/** E[min(X, K)] at strikes in rising order, in one pass over the law. */
+export function expectedMinima(law: AmountLaw, strikes: readonly number[]): Float64Array {
+  const { amounts, masses } = law;
+  const values = new Float64Array(strikes.length);
+  let above = law.overflow;
+  for (const mass of masses) above += mass;
+  let below = 0;
+  let i = 0;
+  for (const [k, strike] of strikes.entries()) {
+    for (; i < amounts.length && amounts[i]! < strike; i++) {
+      below += amounts[i]! * masses[i]!;
+      above -= masses[i]!;
+    }
+    values[k] = strike <= 0 ? 0 : below + strike * above;
+  }
+  return values;
+}
+
 /** E[min((X − A)⁺, D − A)] summed from positive terms, so that a far tail keeps its digits. */
 export function expectedBetween(law: AmountLaw, attachment: number, detachment: number): number {
   const { amounts, masses } = law;

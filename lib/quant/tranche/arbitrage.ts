@@ -1,4 +1,4 @@
-import { chebyshevPoints, chebyshevValue } from "../maths/chebyshev";
+import { angleOfCorrelation, chebyshevPoints, chebyshevValue, correlationOfAngle } from "../maths/chebyshev";
 import type { PoolLaws } from "../portfolio/distribution";
 
 /** A strike interval on which a base curve allows arbitrage at maturity, and the largest violation of slope in it. */
@@ -12,7 +12,9 @@ export interface ArbitrageMark {
 
 const FINEST_STEP = 0.001;
 const IGNORED = 1e-6;
-const POINTS = 33;
+const FEWEST_POINTS = 5;
+const MOST_POINTS = 65;
+const SETTLED = 1e-8;
 
 /**
  * Strikes at which E[min(L, K)] at ρ(K) fails to rise, to be concave, or to have a slope in [0, 1]; at maturity, on a
@@ -44,29 +46,54 @@ function append(marks: ArbitrageMark[], mark: ArbitrageMark): void {
   } else marks.push(mark);
 }
 
-/** E[min(L, K)] at each strike's own correlation, from whole laws at Chebyshev points of √ρ's range. */
+/** E[min(L, K)] at each strike's own correlation; beyond the last strike where it changes, from one law. */
 function expectedMinima(laws: PoolLaws, strikes: readonly number[], rhos: readonly number[]): number[] {
   const { portfolio } = laws;
   const last = portfolio.times.length - 1;
-  const live = (strike: number) => Math.max(0, strike - portfolio.realisedLoss);
-  const lawAt = (rho: number) => {
-    const law = laws.forOneDependence().whole("loss", last, { kind: "flat", rho });
-    return strikes.map((strike) => law.between(0, live(strike)));
+  const minimaAt = (rho: number, at: readonly number[]) => {
+    const live = at.map((strike) => Math.max(0, strike - portfolio.realisedLoss));
+    return laws.expectedMinimaOnce(last, rho, live);
   };
-  const roots = rhos.map((rho) => Math.sqrt(rho));
-  const low = Math.min(...roots);
-  const high = Math.max(...roots);
-  const certain = strikes.map((strike) => Math.min(strike, portfolio.realisedLoss));
-  if (high - low < 1e-12) return lawAt(rhos[0]!).map((value, i) => certain[i]! + value);
-  const points = chebyshevPoints(POINTS, low, high);
-  const samples = points.map((root) => lawAt(Math.min(1, root * root)));
-  return strikes.map(
-    (_, i) =>
-      certain[i]! +
+  const highest = rhos[rhos.length - 1]!;
+  const steady = rhos.findLastIndex((rho) => rho !== highest) + 1;
+  const values = [
+    ...varyingMinima(minimaAt, strikes.slice(0, steady), rhos.slice(0, steady)),
+    ...minimaAt(highest, strikes.slice(steady)),
+  ];
+  return strikes.map((strike, i) => Math.min(strike, portfolio.realisedLoss) + values[i]!);
+}
+
+type MinimaAt = (rho: number, strikes: readonly number[]) => Float64Array;
+
+/**
+ * From laws at Chebyshev points of the correlation's angle, their number doubled until the values settle: at the geometric pace of
+ * interpolation the last set errs by about the square of what it changed.
+ */
+function varyingMinima(minimaAt: MinimaAt, strikes: readonly number[], rhos: readonly number[]): number[] {
+  if (strikes.length === 0) return [];
+  const angles = rhos.map(angleOfCorrelation);
+  const low = Math.min(...angles);
+  const high = Math.max(...angles);
+  if (high - low < 1e-12) return [...minimaAt(rhos[0]!, strikes)];
+  const known = new Map<number, Float64Array>();
+  const sample = (angle: number) => {
+    const values = known.get(angle) ?? minimaAt(correlationOfAngle(angle), strikes);
+    known.set(angle, values);
+    return values;
+  };
+  let before: number[] | null = null;
+  for (let count = FEWEST_POINTS; ; count = 2 * count - 1) {
+    const points = chebyshevPoints(count, low, high);
+    const samples = points.map(sample);
+    const values = angles.map((angle, i) =>
       chebyshevValue(
         points,
-        samples.map((sample) => sample[i]!),
-        roots[i]!,
+        samples.map((at) => at[i]!),
+        angle,
       ),
-  );
+    );
+    const change = before ? Math.max(...values.map((value, i) => Math.abs(value - before![i]!))) : 1;
+    if (change < SETTLED || count >= MOST_POINTS) return values;
+    before = values;
+  }
 }
