@@ -7,7 +7,7 @@ import { type Asked, factorDistribution, WHOLE } from "./factorDistribution";
 import { type LargePool, largePoolDistribution } from "./largePool";
 import { oneFactorLaw } from "./oneFactorLaw";
 import type { Portfolio } from "./portfolio";
-import { type SectorGroups, sectorLaw } from "./sectorLaw";
+import { type SectorGroups, sectorGroups, sectorLaw } from "./sectorLaw";
 import { MOST_SUBSET_NAMES, subsetLaw } from "./subsetLaw";
 
 /** Above this correlation the law is that of correlation one, to within 1e-7 of any expected loss. */
@@ -44,12 +44,7 @@ export class PoolLaws {
     /** Strikes of the live sum at which a common law must be accurate. */
     private readonly strikes: Record<AmountKind, readonly number[]>,
   ) {
-    const bySector = new Map<string, number[]>();
-    for (const [k, name] of portfolio.live.entries()) {
-      const key = name.sector ?? "";
-      bySector.set(key, [...(bySector.get(key) ?? []), k]);
-    }
-    this.groups = [...bySector.values()];
+    this.groups = sectorGroups(portfolio.live);
   }
 
   /** Unit of the loss grid; null for the large pool and for laws over sets of defaults. */

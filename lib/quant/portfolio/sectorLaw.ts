@@ -15,6 +15,18 @@ export interface SectorCorrelation {
 /** Names grouped by sector: positions in the grid's shares. */
 export type SectorGroups = readonly (readonly number[])[];
 
+/** Names by sector, in the order in which sectors first appear; names without one share a sector of their own. */
+export function sectorGroups(names: readonly { readonly sector: string | null }[]): SectorGroups {
+  const bySector = new Map<string, number[]>();
+  for (const [k, name] of names.entries()) {
+    const key = name.sector ?? "";
+    const known = bySector.get(key);
+    if (known) known.push(k);
+    else bySector.set(key, [k]);
+  }
+  return [...bySector.values()];
+}
+
 const OUTER_ACCURACY = { absolute: 1e-11, relative: 1e-7 };
 
 /**
