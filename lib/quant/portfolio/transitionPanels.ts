@@ -1,7 +1,7 @@
 import type { ConditionalMoments, Recursion } from "../kernel/recursion";
 
 /** Panel width in units of the factor distance over which the conditional mean moves by its own deviation. */
-const WIDTHS = 6.5;
+const WIDTHS = 6;
 const WIDEST = 4;
 const NARROWEST = 0.02;
 
