@@ -8,6 +8,7 @@ import {
 import type { PricingRequest } from "../pricing/request";
 import type { Shock } from "../pricing/shock";
 import { type ShockedFigures, shockedFigures } from "../pricing/shockedFigures";
+import { type SizingAnswer, type SizingInput, sizeClasses } from "../pricing/sizing";
 import { answer } from "./answer";
 import type { PricingAnswer } from "./protocol";
 
@@ -23,6 +24,8 @@ export const tasks = {
     readonly request: unknown;
     readonly places: readonly number[];
   }): NameDriversAnswer => nameDrivers(input.request, input.places),
+  /** Boundaries from targets. */
+  sizeClasses: (input: SizingInput): SizingAnswer => sizeClasses(input),
   attribute: ({ before, after }: { before: PricingRequest; after: PricingRequest }) =>
     attribute(before, after),
 };

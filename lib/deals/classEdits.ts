@@ -1,5 +1,4 @@
-import type { ClassText } from "./form";
-import { textOf, typedNumber } from "./typed";
+import { type ClassText, textOf, typedNumber } from "./form";
 
 /** Two strikes this close, in percent of the pool, are one boundary. */
 const TOUCHING = 1e-9;

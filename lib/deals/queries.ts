@@ -6,8 +6,7 @@ import { poolIn } from "../pools/commands";
 import { mayOf } from "../workspaces/policy";
 import { inWorkspace } from "../workspaces/schema";
 import { dealIn } from "./commands";
-import { currentHash, requestOfDeal } from "./current";
-import { partsOf } from "./parts";
+import { currentHash, partsOf, requestOfDeal } from "./current";
 import { type DealContent, dealInput, partsInput } from "./schema";
 
 const list = defineQuery({

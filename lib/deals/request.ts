@@ -1,6 +1,5 @@
 import type { MarketContent } from "../markets/schema";
 import type { Extra, NameInput, PricingRequest } from "../pricing/request";
-import { correlationOf } from "./correlation";
 import type { DealContent } from "./schema";
 
 /** The parts of a deal that its request is made of. */
@@ -10,15 +9,12 @@ export interface DealParts {
   readonly names: readonly NameInput[];
   readonly pricingDate: string;
   readonly market: MarketContent;
-  /** Names of the market's quoted pools, by the pool's id. */
-  readonly quotedNames: Readonly<Record<string, readonly NameInput[]>>;
 }
 
 const INCLUDED: Extra[] = ["lossLaw", "timeline"];
 
 /** The pricing request of a deal; what does not fit together is for the request's own checks to say. */
-export function toRequest(parts: DealParts): PricingRequest {
-  const { content, currency, names, pricingDate, market } = parts;
+export function toRequest({ content, currency, names, pricingDate, market }: DealParts): PricingRequest {
   const schedule =
     market.schedule.kind === "even"
       ? { kind: "even" as const, years: content.years ?? 0, perYear: market.schedule.perYear }
@@ -30,7 +26,7 @@ export function toRequest(parts: DealParts): PricingRequest {
     schedule,
     discount: market.discount,
     pool: [...names],
-    correlation: correlationOf(parts),
+    correlation: content.correlation,
     law: { kind: content.law },
     tranches: content.classes.map(({ name: _name, ...tranche }) => tranche),
     ...(content.nthToDefault.length > 0 ? { nthToDefault: content.nthToDefault } : {}),

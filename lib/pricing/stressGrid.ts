@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { type Shock, shockSchema } from "./shock";
+import { noShock, type Shock, shockSchema } from "./shock";
 import type { ShockedFigures } from "./shockedFigures";
 
 const MOST_STEPS = 21;
@@ -33,14 +33,17 @@ export type StressGrid = z.infer<typeof gridSchema>;
 /** A cell of a grid as worked out. */
 export type StressCell = ShockedFigures;
 
+/** Cells to be worked out: the request unmoved, to measure from, then the grid's own along its rows. */
 export function cellCount({ spreads, correlations }: StressGrid): number {
-  return spreads.steps.length * correlations.length;
+  return 1 + spreads.steps.length * correlations.length;
 }
 
-/** The shock of a cell; cells run along the rows. */
+/** The shock of a cell: none in the first, then the common shock with the cell's own steps on top. */
 export function cellShock({ spreads, correlations, shock }: StressGrid, index: number): Shock {
-  const step = spreads.steps[Math.floor(index / correlations.length)]!;
-  const correlation = shock.correlation + correlations[index % correlations.length]!;
+  if (index === 0) return noShock;
+  const place = index - 1;
+  const step = spreads.steps[Math.floor(place / correlations.length)]!;
+  const correlation = shock.correlation + correlations[place % correlations.length]!;
   const isRelative = spreads.kind === "relative";
   return {
     ...shock,
@@ -48,4 +51,9 @@ export function cellShock({ spreads, correlations, shock }: StressGrid, index: n
     shift: isRelative ? shock.shift : shock.shift + step,
     correlation,
   };
+}
+
+/** Where a row and a column of the grid stand among its cells. */
+export function cellAt({ correlations }: StressGrid, row: number, column: number): number {
+  return 1 + row * correlations.length + column;
 }

@@ -135,19 +135,11 @@ function riskMeasures(valuation: Valuation, input: TrancheInput, common: Distrib
 
 /** P(L > A) and P(L ≥ D) at maturity; under a base curve each at its own strike's correlation. */
 function strikeProbabilities(valuation: Valuation, input: TrancheInput, warnings: ReportWarning[]) {
-  const { dependence, laws, portfolio } = valuation;
-  const last = portfolio.times.length - 1;
   const { attachment, detachment } = input;
-  const realised = portfolio.realisedLoss;
-  const lawAt = (strike: number) => {
-    if (dependence.kind === "common") return laws.whole("loss", last, dependence.dependence, laws.isExact);
-    const own = { kind: "flat", rho: dependence.rhoAt(strike) } as const;
-    return laws.atStrike("loss", last, own, strike - realised, laws.isExact);
-  };
-  const above = realised > attachment + 1e-11 ? 1 : lawAt(attachment).above(attachment - realised);
-  const from = realised >= detachment - 1e-11 ? 1 : lawAt(detachment).from(detachment - realised);
+  const realised = valuation.portfolio.realisedLoss;
+  const from = realised >= detachment - 1e-11 ? 1 : lawAt(valuation, detachment).from(detachment - realised);
   for (const strike of [attachment, detachment]) {
-    if (strike > realised && lawAt(strike).isAtom(strike - realised)) {
+    if (strike > realised && lawAt(valuation, strike).isAtom(strike - realised)) {
       const message = `A loss of exactly ${strike} of the pool has probability above zero: the hit probability counts losses above a strike, exhaustion those at it too.`;
       if (
         !warnings.some((warning) => warning.code === "latticeStrike" && warning.subject === String(strike))
@@ -156,7 +148,21 @@ function strikeProbabilities(valuation: Valuation, input: TrancheInput, warnings
       }
     }
   }
-  return { hit: clamp(above), exhaustion: clamp(from) };
+  return { hit: probabilityAbove(valuation, attachment), exhaustion: clamp(from) };
+}
+
+/** P(L > strike) at maturity; under a base curve at the strike's own correlation. */
+export function probabilityAbove(valuation: Valuation, strike: number): number {
+  const realised = valuation.portfolio.realisedLoss;
+  return realised > strike + 1e-11 ? 1 : clamp(lawAt(valuation, strike).above(strike - realised));
+}
+
+/** The law of the loss at maturity that a strike's probabilities are read from. */
+function lawAt({ dependence, laws, portfolio }: Valuation, strike: number): Distribution {
+  const last = portfolio.times.length - 1;
+  if (dependence.kind === "common") return laws.whole("loss", last, dependence.dependence, laws.isExact);
+  const own = { kind: "flat", rho: dependence.rhoAt(strike) } as const;
+  return laws.atStrike("loss", last, own, strike - portfolio.realisedLoss, laws.isExact);
 }
 
 function clamp(probability: number): number {

@@ -3,7 +3,7 @@ import { price } from "@/lib/pricing/price";
 import type { PricingRequest } from "@/lib/pricing/request";
 import { noShock, type Shock } from "@/lib/pricing/shock";
 import { type ShockedClass, shockedFigures } from "@/lib/pricing/shockedFigures";
-import { cellCount, cellShock, gridSchema } from "@/lib/pricing/stressGrid";
+import { cellAt, cellCount, cellShock, gridSchema } from "@/lib/pricing/stressGrid";
 
 const request: PricingRequest = {
   format: 1,
@@ -127,12 +127,13 @@ describe("a stress grid", () => {
     shock: { scale: 2 },
   });
 
-  it("runs along its rows, each cell's steps on top of the common shock", () => {
-    expect(cellCount(grid)).toBe(6);
-    expect(cellShock(grid, 2)).toEqual({ ...noShock, scale: 2 });
-    expect(cellShock(grid, 5)).toEqual({ ...noShock, scale: 4, correlation: 0.1 });
+  it("starts from the request unmoved, then runs along its rows, each cell's steps on top of the common shock", () => {
+    expect(cellCount(grid)).toBe(7);
+    expect(cellShock(grid, 0)).toEqual(noShock);
+    expect(cellShock(grid, cellAt(grid, 1, 0))).toEqual({ ...noShock, scale: 2 });
+    expect(cellShock(grid, cellAt(grid, 2, 1))).toEqual({ ...noShock, scale: 4, correlation: 0.1 });
     const absolute = { ...grid, spreads: { kind: "absolute" as const, steps: [0.01] } };
-    expect(cellShock(absolute, 0)).toEqual({ ...noShock, scale: 2, shift: 0.01 });
+    expect(cellShock(absolute, 1)).toEqual({ ...noShock, scale: 2, shift: 0.01 });
   });
 
   it("is refused with a step twice, or more than 21 of one shock", () => {

@@ -46,7 +46,7 @@ export function trancheProfile(
  * E[min((S − A)⁺, D − A)] of the whole pool's sum S, realised part included. Under a base curve each strike has its
  * own law; a recovery strike 1 − K is read at the correlation of K.
  */
-function amountBetween(
+export function amountBetween(
   laws: PoolLaws,
   dependence: StrikeDependence,
   kind: "loss" | "recovery",

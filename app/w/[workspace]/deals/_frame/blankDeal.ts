@@ -1,4 +1,3 @@
-import { blankCorrelation } from "@/lib/deals/correlationForm";
 import type { DealForm } from "@/lib/deals/form";
 
 /** The form of a deal to be: the first pool and market, five years, a flat correlation, no class yet. */
@@ -15,7 +14,6 @@ export function blankDeal(
     maturity: date ? `${year}-12-20` : "",
     years: "5",
     rho: "30",
-    correlation: blankCorrelation,
     law: "finite",
     classes: [],
     nthToDefault: "",

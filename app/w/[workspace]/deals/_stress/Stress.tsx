@@ -1,0 +1,78 @@
+"use client";
+
+import { Stack } from "@mantine/core";
+import { useMemo } from "react";
+import { useKept } from "@/app/_ui/useKept";
+import type { Operations } from "@/lib/operations";
+import { blankGrid, blankShock, type GridForm, readShock, type ShockForm } from "@/lib/scenarios/form";
+import { useDeal } from "../_frame/dealContext";
+import { NothingToShow } from "../_frame/NothingToShow";
+import { GridDesk } from "./GridDesk";
+import { ScenarioBar } from "./ScenarioBar";
+import { ScenarioTable } from "./ScenarioTable";
+import { ShockFields } from "./ShockFields";
+
+export type Scenarios = Operations["scenarios.list"]["output"];
+export type Work = Operations["jobs.list"]["output"];
+
+/** What the stress room holds as typed, kept in this browser. */
+export interface StressText {
+  readonly shock: ShockForm;
+  readonly grid: GridForm;
+  /** The scenario that the shock was taken from, and its version then. */
+  readonly of: { readonly id: string; readonly version: number } | null;
+}
+
+const blank: StressText = { shock: blankShock, grid: blankGrid, of: null };
+
+/** The room of shocks: a common shock, kept scenarios side by side, and the grid of spreads by correlation. */
+export function Stress({ work, kept }: { work: Work; kept: Scenarios }) {
+  const { deal, request, form } = useDeal();
+  const [typed, setTyped] = useKept<StressText>(`stress ${deal?.id ?? ""}`);
+  const text = typed ?? blank;
+  const reading = useMemo(() => readShock(text.shock), [text.shock]);
+  const classes = useMemo(
+    () =>
+      (request?.tranches ?? []).map(({ id }) => ({
+        id,
+        name: form.classes.find((row) => (row.id.trim() || row.key) === id)?.name || id,
+      })),
+    [request, form.classes],
+  );
+  if (!request || classes.length === 0)
+    return <NothingToShow what="Stress of a class" needsClass={request !== null} />;
+  const change = (part: Partial<StressText>) => setTyped({ ...text, ...part });
+  return (
+    <Stack gap="lg">
+      <section aria-label="Common shock">
+        <ScenarioBar
+          scenarios={kept.scenarios}
+          mayEdit={kept.may.edit}
+          text={text}
+          reading={reading}
+          onChange={change}
+        />
+        <ShockFields
+          shock={text.shock}
+          problems={reading.ok ? [] : reading.problems}
+          pool={request.pool}
+          onChange={(shock) => change({ shock })}
+        />
+      </section>
+      <ScenarioTable
+        request={request}
+        classes={classes}
+        scenarios={kept.scenarios}
+        typed={reading.ok ? reading.shock : null}
+      />
+      <GridDesk
+        request={request}
+        classes={classes}
+        work={work}
+        grid={text.grid}
+        shock={reading.ok ? reading.shock : null}
+        onChange={(grid) => change({ grid })}
+      />
+    </Stack>
+  );
+}
