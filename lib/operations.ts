@@ -12,6 +12,8 @@ import { queries as marketQueries } from "./markets/queries";
 import type { AnyOperation } from "./platform/run";
 import { commands as poolCommands } from "./pools/commands";
 import { queries as poolQueries } from "./pools/queries";
+import { commands as reviewCommands } from "./reviews/commands";
+import { queries as reviewQueries } from "./reviews/queries";
 import { commands as runCommands } from "./runs/commands";
 import { queries as runQueries } from "./runs/queries";
 import { commands as scenarioCommands } from "./scenarios/commands";
@@ -30,6 +32,8 @@ const rooms = [
   dealQueries,
   runCommands,
   runQueries,
+  reviewCommands,
+  reviewQueries,
   scenarioCommands,
   scenarioQueries,
   alternativeCommands,

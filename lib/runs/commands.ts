@@ -9,7 +9,8 @@ import { canonicalJson } from "../pricing/canonical";
 import type { PricingReport } from "../pricing/report";
 import { mayWork, need } from "../workspaces/policy";
 import { queries as workspaceQueries } from "../workspaces/queries";
-import { priceInput } from "./schema";
+import { queries as runQueries } from "./queries";
+import { priceInput, runInput } from "./schema";
 import { packed } from "./stored";
 
 interface Priced {
@@ -89,6 +90,31 @@ const price = defineCommand({
   },
 });
 
+/** Prices a run's own request again and says whether the report has the same bits. Nothing is written. */
+const repeat = defineCommand({
+  name: "runs.repeat",
+  input: runInput,
+  async prepare({ workspaceId, runId }, ask, actor) {
+    const { may, role } = await ask(workspaceQueries.open, { workspaceId });
+    need(may.work, role, "price a run again");
+    const stored = await ask(runQueries.open, { workspaceId, runId });
+    const answer = await priceOnServer(stored.request, actor.userId);
+    if (!answer.ok) throw new Refusal("invalid", answer.problems);
+    const report = JSON.parse(answer.report) as PricingReport;
+    return {
+      isSame: canonicalJson(report) === canonicalJson(stored.report),
+      engineThen: stored.engine,
+      engineNow: `${report.engine.name} ${report.engine.version}`,
+      milliseconds: answer.milliseconds,
+    };
+  },
+  async run({ member }, { workspaceId }, outcome) {
+    const self = await member(workspaceId);
+    need(mayWork(self), self.role, "price a run again");
+    return outcome;
+  },
+});
+
 function changedMeanwhile(): Refusal {
   return refuse(
     "conflict",
@@ -97,4 +123,4 @@ function changedMeanwhile(): Refusal {
   );
 }
 
-export const commands = { price };
+export const commands = { price, repeat };

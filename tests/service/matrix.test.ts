@@ -216,6 +216,33 @@ const rows: Record<string, Row> = {
     expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
     input: ({ workspaceId }) => ({ workspaceId, jobId: "none" }),
   },
+  "runs.repeat": {
+    expected: ["notFound", "notFound", "notFound", "forbidden", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, runId: "none" }),
+  },
+  "reviews.ask": {
+    expected: ["notFound", "notFound", "forbidden", "forbidden", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, runId: "none", reviewers: ["someone"] }),
+  },
+  "reviews.answer": {
+    expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, reviewId: "none", answer: "signed", checks: [] }),
+  },
+  "reviews.withdraw": {
+    expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, reviewId: "none" }),
+  },
+  "reviews.saveSettings": {
+    expected: owners,
+    input: ({ workspaceId }) => ({ workspaceId, settings: { checklist: ["Pool"], needed: 1 } }),
+  },
+  "reviews.standing": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "reviews.list": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "reviews.open": {
+    expected: ["notFound", "notFound", "notFound", "notFound", "notFound"],
+    input: ({ workspaceId }) => ({ workspaceId, reviewId: "none" }),
+  },
+  "reviews.settings": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
   "discussion.start": {
     expected: workers,
     input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, body: "Hello" }),

@@ -2,6 +2,7 @@ import { Stack } from "@mantine/core";
 import type { ReactNode } from "react";
 import { ask } from "@/app/_ui/ask";
 import { queries as deals } from "@/lib/deals/queries";
+import { queries as reviews } from "@/lib/reviews/queries";
 import { DealFrame } from "../_frame/DealFrame";
 import { DealHeader } from "../_frame/DealHeader";
 
@@ -15,6 +16,7 @@ export default async function DealLayout({
 }) {
   const { workspace: workspaceId, deal: dealId } = await params;
   const deal = await ask(deals.open, { workspaceId, dealId });
+  const { standing } = await ask(reviews.standing, { workspaceId, dealId });
   return (
     <DealFrame
       workspaceId={workspaceId}
@@ -23,7 +25,7 @@ export default async function DealLayout({
       pools={deal.pools}
       markets={deal.markets}
     >
-      <DealHeader />
+      <DealHeader standing={standing} />
       <Stack gap="lg" mt="md">
         {children}
       </Stack>

@@ -2,14 +2,21 @@
 
 import { Badge, Group, Stack, Text, Title } from "@mantine/core";
 import { Problems } from "@/app/_ui/Problems";
+import type { Standing } from "@/lib/reviews/standing";
 import { Behind } from "./Behind";
 import { DealActions } from "./DealActions";
 import { useDeal } from "./dealContext";
 import styles from "./frame.module.css";
 import { RoomTabs } from "./RoomTabs";
 
+const standingWords: Record<Exclude<Standing, "none">, string> = {
+  signed: "Signed off",
+  changed: "Changed since sign-off",
+  underReview: "Under review",
+};
+
 /** The head of the desk: which deal, what of it is not saved, what can be done with it, and the rooms. */
-export function DealHeader() {
+export function DealHeader({ standing = "none" }: { standing?: Standing }) {
   const { workspaceId, deal, isDirty, isBehind, refused, tried, mayEdit } = useDeal();
   return (
     <>
@@ -17,7 +24,15 @@ export function DealHeader() {
         <Group justify="space-between" align="start" gap="xs">
           <div>
             <Title order={1} size="h3">
-              {deal ? deal.name : "New deal"} {deal?.isArchived && <Badge variant="default">Archived</Badge>}
+              {deal ? deal.name : "New deal"} {deal?.isArchived && <Badge variant="default">Archived</Badge>}{" "}
+              {standing !== "none" && (
+                <Badge
+                  variant={standing === "signed" ? "filled" : "outline"}
+                  color={standing === "changed" ? "orange" : "teal"}
+                >
+                  {standingWords[standing]}
+                </Badge>
+              )}
             </Title>
             <Text size="sm" c="dimmed" aria-live="polite">
               {deal &&

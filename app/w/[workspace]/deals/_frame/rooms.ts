@@ -6,6 +6,7 @@ export const rooms = [
   { slug: "sizing", label: "Sizing" },
   { slug: "runs", label: "Runs" },
   { slug: "talk", label: "Talk" },
+  { slug: "sign-off", label: "Sign-off" },
 ] as const satisfies readonly { slug: string; label: string }[];
 
 export type Room = (typeof rooms)[number];
