@@ -10,6 +10,7 @@ const fields: readonly (readonly [RegExp, string])[] = [
   [/^schedule\.years/, "content.years"],
   [/^correlation/, "content.correlation"],
   [/^nthToDefault/, "content.nthToDefault"],
+  [/^correlation\.index\.pool/, "content.correlation"],
   [/^pool/, "poolId"],
   [/^(discount|pricingDate|schedule)/, "marketId"],
   [/^law/, "content.law"],

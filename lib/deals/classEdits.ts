@@ -1,4 +1,5 @@
-import { type ClassText, textOf, typedNumber } from "./form";
+import type { ClassText } from "./form";
+import { textOf, typedNumber } from "./typed";
 
 /** Two strikes this close, in percent of the pool, are one boundary. */
 const TOUCHING = 1e-9;

@@ -1,12 +1,11 @@
 import { randomUUID } from "node:crypto";
 import { marketIn } from "../markets/commands";
-import type { MarketContent } from "../markets/schema";
 import { notFound, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
 import { poolIn } from "../pools/commands";
-import { namesOf } from "../pools/names";
 import { asEditor } from "../workspaces/guards";
 import { checkDeal } from "./check";
+import { partsOf } from "./parts";
 import { archiveInput, copyInput, createInput, type DealContent, saveInput, versionInput } from "./schema";
 
 const create = defineCommand({
@@ -97,14 +96,7 @@ async function checkParts(
   const market = await marketIn(context, workspaceId, marketId).catch(() => null);
   if (!pool) throw refuse("invalid", "noPool", "Choose a pool of this workspace.", "poolId");
   if (!market) throw refuse("invalid", "noMarket", "Choose a market of this workspace.", "marketId");
-  const names = await namesOf(context.tx, poolId);
-  checkDeal({
-    content,
-    currency: pool.currency,
-    names,
-    pricingDate: market.pricingDate,
-    market: market.content as MarketContent,
-  });
+  checkDeal({ ...(await partsOf(context, workspaceId, poolId, marketId)), content });
 }
 
 async function makeDeal(

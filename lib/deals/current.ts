@@ -1,10 +1,8 @@
-import { marketIn } from "../markets/commands";
 import type { MarketContent } from "../markets/schema";
 import type { QueryContext } from "../platform/operation";
-import { poolIn } from "../pools/commands";
-import { namesOf } from "../pools/names";
 import { requestHash } from "../pricing/canonical";
 import { dealIn } from "./commands";
+import { partsOf } from "./parts";
 import { toRequest } from "./request";
 import type { DealContent } from "./schema";
 
@@ -25,11 +23,18 @@ export async function currentHash(
     select: {
       version: true,
       pool: { select: { id: true, version: true } },
-      market: { select: { id: true, version: true } },
+      market: { select: { id: true, version: true, content: true } },
     },
   });
   const { version, pool, market } = deal;
-  const key = [dealId, version, pool.id, pool.version, market.id, market.version].join(" ");
+  const quoted = (market.content as MarketContent).quotedPools?.map(({ poolId }) => poolId) ?? [];
+  const linked = await context.tx.pool.findMany({
+    where: { workspaceId, id: { in: quoted } },
+    select: { id: true, version: true },
+    orderBy: { id: "asc" },
+  });
+  const pools = [pool, ...linked].map(({ id, version: of }) => `${id} ${of}`);
+  const key = [dealId, version, market.id, market.version, ...pools].join(" ");
   const known = kept.get(key);
   if (known !== undefined) return known;
   const { request } = await requestOfDeal(context, workspaceId, dealId);
@@ -37,18 +42,6 @@ export async function currentHash(
   if (kept.size >= MOST_KEPT) kept.clear();
   kept.set(key, hash);
   return hash;
-}
-
-/** A pool and a market of the workspace, as a request takes them. */
-export async function partsOf(context: QueryContext, workspaceId: string, poolId: string, marketId: string) {
-  const pool = await poolIn(context, workspaceId, poolId);
-  const market = await marketIn(context, workspaceId, marketId);
-  return {
-    currency: pool.currency,
-    names: await namesOf(context.tx, poolId),
-    pricingDate: market.pricingDate,
-    market: market.content as MarketContent,
-  };
 }
 
 /** The request that pricing the deal now would make, and the version it is of. */

@@ -1,5 +1,7 @@
 import type { Problem } from "../platform/errors";
+import { type CorrelationText, correlationText, readCorrelation } from "./correlationForm";
 import { type DealClass, type DealContent, dealContent } from "./schema";
+import { NumberReader, textOf } from "./typed";
 
 /** A class as typed: percent of the pool, basis points of coupon, percent of upfront. */
 export interface ClassText {
@@ -20,6 +22,7 @@ export interface DealForm {
   readonly maturity: string;
   readonly years: string;
   readonly rho: string;
+  readonly correlation: CorrelationText;
   readonly law: DealContent["law"];
   readonly classes: readonly ClassText[];
   readonly nthToDefault: string;
@@ -31,51 +34,15 @@ export type DealReading =
   | { readonly ok: true; readonly content: DealContent }
   | { readonly ok: false; readonly problems: readonly Problem[] };
 
-/** A typed number with comma or point; undefined when empty, null when it is none. */
-export function typedNumber(text: string): number | null | undefined {
-  const plain = text
-    .trim()
-    .replace(/[\s\u202f\u00a0%]/g, "")
-    .replace(",", ".");
-  if (plain === "") return undefined;
-  return /^-?(\d+\.?\d*|\.\d+)$/.test(plain) ? Number(plain) : null;
-}
-
-/** The decimal meant by a number of percent or basis points, without binary crumbs. */
-function scaled(value: number, by: number): number {
-  return Number((value / by).toPrecision(15));
-}
-
-export function textOf(value: number | undefined, by: number): string {
-  return value === undefined ? "" : String(Number((value * by).toPrecision(15)));
-}
-
-/** Reads a form; `base` keeps what the form does not show (a correlation other than flat). */
+/** Reads a form; `base` keeps a correlation that only the programming interface can give. */
 export function readDealForm(
   form: DealForm,
   scheduleKind: "even" | "standard",
   base: DealContent | null,
 ): DealReading {
-  const problems: Problem[] = [];
-  const number = (
-    text: string,
-    by: number,
-    path: string,
-    what: string,
-    isNeeded: boolean,
-  ): number | undefined => {
-    const value = typedNumber(text);
-    if (value === null)
-      problems.push({
-        code: "number",
-        path,
-        value: text,
-        message: `${what} must be a number (it is "${text}").`,
-      });
-    if (value === undefined && isNeeded)
-      problems.push({ code: "missing", path, message: `${what} is missing.` });
-    return value === null || value === undefined ? undefined : scaled(value, by);
-  };
+  const numbers = new NumberReader();
+  const { problems } = numbers;
+  const number: NumberReader["read"] = (...field) => numbers.read(...field);
   const classes: DealClass[] = form.classes.map((row, i) => {
     const at = (field: string) => `content.classes.${i}.${field}`;
     const label = row.name || `Class ${i + 1}`;
@@ -90,8 +57,7 @@ export function readDealForm(
       ...(upfront === undefined ? {} : { upfront }),
     };
   });
-  const isFlat = !base || base.correlation.kind === "flat";
-  const rho = isFlat ? number(form.rho, 100, "content.correlation.rho", "The correlation", true) : undefined;
+  const correlation = readCorrelation(form.correlation, form.rho, base?.correlation ?? null, numbers);
   const years =
     scheduleKind === "even"
       ? number(form.years, 1, "content.years", "The maturity in years", true)
@@ -105,7 +71,7 @@ export function readDealForm(
     maturity: scheduleKind === "standard" ? form.maturity : null,
     years: years ?? null,
     law: form.law,
-    correlation: isFlat ? { kind: "flat", rho } : base.correlation,
+    correlation,
     classes,
     nthToDefault,
     notes: form.notes,
@@ -136,6 +102,7 @@ export function dealFormOf(deal: {
     maturity: content.maturity ?? "",
     years: content.years === null ? "" : String(content.years),
     rho: content.correlation.kind === "flat" ? textOf(content.correlation.rho, 100) : "",
+    correlation: correlationText(content.correlation),
     law: content.law,
     classes: content.classes.map((row) => ({
       key: row.id,

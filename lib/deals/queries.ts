@@ -6,7 +6,8 @@ import { poolIn } from "../pools/commands";
 import { mayOf } from "../workspaces/policy";
 import { inWorkspace } from "../workspaces/schema";
 import { dealIn } from "./commands";
-import { currentHash, partsOf, requestOfDeal } from "./current";
+import { currentHash, requestOfDeal } from "./current";
+import { partsOf } from "./parts";
 import { type DealContent, dealInput, partsInput } from "./schema";
 
 const list = defineQuery({

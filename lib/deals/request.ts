@@ -1,5 +1,6 @@
 import type { MarketContent } from "../markets/schema";
 import type { Extra, NameInput, PricingRequest } from "../pricing/request";
+import { correlationOf } from "./correlation";
 import type { DealContent } from "./schema";
 
 /** The parts of a deal that its request is made of. */
@@ -9,12 +10,15 @@ export interface DealParts {
   readonly names: readonly NameInput[];
   readonly pricingDate: string;
   readonly market: MarketContent;
+  /** Names of the market's quoted pools, by the pool's id. */
+  readonly quotedNames: Readonly<Record<string, readonly NameInput[]>>;
 }
 
 const INCLUDED: Extra[] = ["lossLaw", "timeline"];
 
 /** The pricing request of a deal; what does not fit together is for the request's own checks to say. */
-export function toRequest({ content, currency, names, pricingDate, market }: DealParts): PricingRequest {
+export function toRequest(parts: DealParts): PricingRequest {
+  const { content, currency, names, pricingDate, market } = parts;
   const schedule =
     market.schedule.kind === "even"
       ? { kind: "even" as const, years: content.years ?? 0, perYear: market.schedule.perYear }
@@ -26,7 +30,7 @@ export function toRequest({ content, currency, names, pricingDate, market }: Dea
     schedule,
     discount: market.discount,
     pool: [...names],
-    correlation: content.correlation,
+    correlation: correlationOf(parts),
     law: { kind: content.law },
     tranches: content.classes.map(({ name: _name, ...tranche }) => tranche),
     ...(content.nthToDefault.length > 0 ? { nthToDefault: content.nthToDefault } : {}),

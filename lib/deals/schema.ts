@@ -14,6 +14,19 @@ export const dealClass = trancheSchema.extend({
 });
 export type DealClass = z.infer<typeof dealClass>;
 
+/** The base curve of a pool quoted in the deal's market, carried over to the deal's pool. */
+const marketCorrelation = z.strictObject({
+  kind: z.literal("market"),
+  quotedPool: z.string().min(1, "Choose a quoted pool of the market.").max(60),
+  interpolation: z.enum(["linear", "monotone"]),
+  beyond: z.enum(["flat", "linear"]),
+  mapping: z.enum(["none", "moneyness", "lossShare", "probability"]),
+});
+
+/** How the names of a deal default together: the request's own kinds, or a curve of the market. */
+export const dealCorrelation = z.union([marketCorrelation, correlationSchema]);
+export type DealCorrelation = z.infer<typeof dealCorrelation>;
+
 /** What a deal holds beside its links to a pool and a market. Maturity for a standard schedule, years for an even one. */
 export const dealContent = z.strictObject({
   maturity: z
@@ -22,7 +35,7 @@ export const dealContent = z.strictObject({
     .nullable(),
   years: z.number().nullable(),
   law: z.enum(["finite", "largePool"]),
-  correlation: correlationSchema,
+  correlation: dealCorrelation,
   classes: z.array(dealClass).max(50, "A deal has at most 50 classes."),
   nthToDefault: z.array(z.number()).max(200, "A deal has at most 200 n-th-to-default contracts."),
   notes: z.string().max(5_000, "Notes have at most 5,000 characters."),

@@ -4,12 +4,15 @@ import { type CommandContext, defineCommand, type QueryContext } from "../platfo
 import { asEditor } from "../workspaces/guards";
 import { marketProblems } from "./check";
 import { archiveInput, copyInput, createInput, type MarketContent, saveInput } from "./schema";
+import { solveQuotes, withQuotes } from "./solveQuotes";
 
 const create = defineCommand({
   name: "markets.create",
   input: createInput,
-  async run(context, { workspaceId, name, pricingDate, content }) {
+  prepare: (input, ask, actor) => solveQuotes(input, ask, actor),
+  async run(context, { workspaceId, name, pricingDate, content: typed }, quotedPools) {
     await asEditor(context, workspaceId, "change markets");
+    const content = withQuotes(typed, quotedPools);
     checkMarket(pricingDate, content);
     return { marketId: await makeMarket(context, workspaceId, name, pricingDate, content) };
   },
@@ -18,8 +21,10 @@ const create = defineCommand({
 const save = defineCommand({
   name: "markets.save",
   input: saveInput,
-  async run(context, { workspaceId, marketId, version, name, pricingDate, content }) {
+  prepare: (input, ask, actor) => solveQuotes(input, ask, actor),
+  async run(context, { workspaceId, marketId, version, name, pricingDate, content: typed }, quotedPools) {
     await asEditor(context, workspaceId, "change markets");
+    const content = withQuotes(typed, quotedPools);
     const { tx, record, emit } = context;
     const before = await marketIn(context, workspaceId, marketId, true);
     if (before.version !== version) {

@@ -1,5 +1,6 @@
 import { marketProblems } from "./check";
-import type { MarketContent } from "./schema";
+import { quotesText, readQuotes } from "./quotesText";
+import type { MarketContent, QuotedPool } from "./schema";
 
 /** A market as typed: every field is text, so that nothing typed is lost while it does not fit. Rates are in percent. */
 export interface MarketForm {
@@ -12,6 +13,15 @@ export interface MarketForm {
   readonly perYear: string;
   /** Dates in any separation. */
   readonly holidays: string;
+  readonly quotedPools: readonly QuotedPoolText[];
+}
+
+/** A quoted pool as typed: its quotes a line each, as pasted from a spreadsheet. */
+export interface QuotedPoolText {
+  readonly key: string;
+  readonly name: string;
+  readonly poolId: string;
+  readonly quotes: string;
 }
 
 /** What a form says: the market, or what does not fit by field path. */
@@ -35,6 +45,7 @@ export function blankForm(pricingDate: string): MarketForm {
     scheduleKind: "standard",
     perYear: "4",
     holidays: "",
+    quotedPools: [],
   };
 }
 
@@ -55,6 +66,12 @@ export function formOf(market: {
       : {
           nodes: discount.nodes.map(({ years, rate }) => ({ years: String(years), rate: percentText(rate) })),
         }),
+    quotedPools: (market.content.quotedPools ?? []).map(({ key, name, poolId, maturities }) => ({
+      key,
+      name,
+      poolId,
+      quotes: quotesText(maturities),
+    })),
     scheduleKind: schedule.kind,
     ...(schedule.kind === "even"
       ? { perYear: String(schedule.perYear) }
@@ -68,6 +85,7 @@ const groups: readonly (readonly (keyof MarketForm)[])[] = [
   ["pricingDate"],
   ["discountKind", "rate", "nodes"],
   ["scheduleKind", "perYear", "holidays"],
+  ["quotedPools"],
 ];
 
 /** My changes since `base`, laid over their newer version: what I left alone is theirs. */
@@ -89,6 +107,7 @@ export function readForm(form: MarketForm): FormReading {
   const content: MarketContent = {
     discount: readDiscount(form, problems),
     schedule: readSchedule(form, problems),
+    ...(form.quotedPools.length > 0 ? { quotedPools: readQuotedPools(form, problems) } : {}),
   };
   if (!/^\d{4}-\d{2}-\d{2}$/.test(form.pricingDate)) problems.pricingDate = "A date is written YYYY-MM-DD.";
   if (Object.keys(problems).every((path) => path === "name")) {
@@ -109,6 +128,17 @@ function readDiscount(form: MarketForm, problems: Record<string, string>): Marke
       rate: rateAt(rate, `content.discount.nodes.${i}.rate`),
     })),
   };
+}
+
+function readQuotedPools(form: MarketForm, problems: Record<string, string>): QuotedPool[] {
+  return form.quotedPools.map(({ key, name, poolId, quotes }, i) => {
+    const at = `content.quotedPools.${i}`;
+    if (name.trim() === "") problems[`${at}.name`] = "Give the quoted pool a name.";
+    if (poolId === "") problems[`${at}.poolId`] = "Choose a pool.";
+    const read = readQuotes(quotes, form.scheduleKind === "even");
+    if (read.problems.length > 0) problems[`${at}.maturities`] = read.problems.join(" ");
+    return { key, name: name.trim(), poolId, maturities: read.maturities };
+  });
 }
 
 function readSchedule(form: MarketForm, problems: Record<string, string>): MarketContent["schedule"] {

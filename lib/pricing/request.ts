@@ -102,7 +102,7 @@ export const nameSchema = z.strictObject({
 
 const poolSchema = listOf(nameSchema, LIMITS.names, "names").min(1, "must have at least one name");
 
-const quoteSchema = z.strictObject({
+export const quoteSchema = z.strictObject({
   attachment: fraction,
   detachment: fraction,
   running: within(-10, 10, "must be a running coupon (decimal, 0.01 is 100 bp)"),

@@ -1,3 +1,4 @@
+import { blankCorrelation } from "@/lib/deals/correlationForm";
 import type { DealForm } from "@/lib/deals/form";
 
 /** The form of a deal to be: the first pool and market, five years, a flat correlation, no class yet. */
@@ -14,6 +15,7 @@ export function blankDeal(
     maturity: date ? `${year}-12-20` : "",
     years: "5",
     rho: "30",
+    correlation: blankCorrelation,
     law: "finite",
     classes: [],
     nthToDefault: "",

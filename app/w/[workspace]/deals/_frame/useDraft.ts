@@ -1,6 +1,6 @@
 "use client";
 
-import { useCallback, useState } from "react";
+import { useCallback, useMemo, useState } from "react";
 import { useKept } from "@/app/_ui/useKept";
 import type { DealForm } from "@/lib/deals/form";
 
@@ -39,7 +39,7 @@ export function useDraft(key: string, saved: DealForm, version: number) {
     },
     [kept, setKept],
   );
-  const form = kept?.form ?? saved;
+  const form = useMemo(() => (kept ? { ...saved, ...kept.form } : saved), [kept, saved]);
   return {
     kept,
     form,

@@ -9,6 +9,7 @@ import { FigureTable } from "@/app/_ui/table/FigureTable";
 import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import { usePieces } from "@/app/_ui/usePieces";
 import type { ClassText } from "@/lib/deals/form";
+import type { Operations } from "@/lib/operations";
 import type { Problem } from "@/lib/platform/errors";
 import type { PricingReport, TrancheReport } from "@/lib/pricing/report";
 import type { PricingRequest } from "@/lib/pricing/request";
@@ -17,8 +18,9 @@ import { PiecesProgress } from "../_frame/PiecesProgress";
 import { hiddenTrancheColumns, trancheColumns } from "../_report/trancheColumns";
 import { classesOf, classTexts } from "./classesOf";
 import { MiniHull } from "./MiniHull";
-import type { Alternatives } from "./Sizing";
 import styles from "./sizing.module.css";
+
+export type Alternatives = Operations["alternatives.list"]["output"]["alternatives"];
 
 interface Structure {
   readonly key: string;

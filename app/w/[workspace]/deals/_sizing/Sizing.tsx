@@ -13,14 +13,11 @@ import {
   type SizingForm,
   sizingFormOf,
 } from "@/lib/alternatives/sizingForm";
-import type { Operations } from "@/lib/operations";
 import { useDeal } from "../_frame/dealContext";
 import { NothingToShow } from "../_frame/NothingToShow";
-import { Compared } from "./Compared";
+import { type Alternatives, Compared } from "./Compared";
 import { SizedActions } from "./SizedActions";
 import { TargetTable } from "./TargetTable";
-
-export type Alternatives = Operations["alternatives.list"]["output"]["alternatives"];
 
 const PAUSE = 350;
 

@@ -16,7 +16,7 @@ import { useDeal } from "../_frame/dealContext";
 import { PiecesProgress } from "../_frame/PiecesProgress";
 import { GridView } from "./GridView";
 import { JobStatus } from "./JobStatus";
-import type { Work } from "./Stress";
+import type { Work } from "./text";
 import { useJobs } from "./useJobs";
 
 interface Here {

@@ -8,7 +8,7 @@ import { Problems } from "@/app/_ui/Problems";
 import type { Problem } from "@/lib/platform/errors";
 import { blankShock, type ShockReading, shockFormOf } from "@/lib/scenarios/form";
 import { useDeal } from "../_frame/dealContext";
-import type { Scenarios, StressText } from "./Stress";
+import type { Scenarios, StressText } from "./text";
 
 /** Takes a kept scenario up as the common shock, and keeps, saves or deletes one. */
 export function ScenarioBar({

@@ -13,7 +13,7 @@ import { shockWords } from "@/lib/scenarios/form";
 import type { NamedClass } from "../_drivers/NameTable";
 import { PiecesProgress } from "../_frame/PiecesProgress";
 import { figureIn, type Measure, measures, unitOf } from "./measures";
-import type { Scenarios } from "./Stress";
+import type { Scenarios } from "./text";
 
 interface Row {
   readonly key: string;

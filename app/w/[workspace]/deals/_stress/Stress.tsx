@@ -3,25 +3,14 @@
 import { Stack } from "@mantine/core";
 import { useMemo } from "react";
 import { useKept } from "@/app/_ui/useKept";
-import type { Operations } from "@/lib/operations";
-import { blankGrid, blankShock, type GridForm, readShock, type ShockForm } from "@/lib/scenarios/form";
+import { blankGrid, blankShock, readShock } from "@/lib/scenarios/form";
 import { useDeal } from "../_frame/dealContext";
 import { NothingToShow } from "../_frame/NothingToShow";
 import { GridDesk } from "./GridDesk";
 import { ScenarioBar } from "./ScenarioBar";
 import { ScenarioTable } from "./ScenarioTable";
 import { ShockFields } from "./ShockFields";
-
-export type Scenarios = Operations["scenarios.list"]["output"];
-export type Work = Operations["jobs.list"]["output"];
-
-/** What the stress room holds as typed, kept in this browser. */
-export interface StressText {
-  readonly shock: ShockForm;
-  readonly grid: GridForm;
-  /** The scenario that the shock was taken from, and its version then. */
-  readonly of: { readonly id: string; readonly version: number } | null;
-}
+import type { Scenarios, StressText, Work } from "./text";
 
 const blank: StressText = { shock: blankShock, grid: blankGrid, of: null };
 

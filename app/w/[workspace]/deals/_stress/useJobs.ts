@@ -4,7 +4,7 @@ import { useCallback, useEffect, useRef, useState } from "react";
 import { call } from "@/app/_ui/call";
 import type { Operations } from "@/lib/operations";
 import { useLiveEvents } from "../../_live/Live";
-import type { Work } from "./Stress";
+import type { Work } from "./text";
 
 export type OpenJob = Operations["jobs.open"]["output"];
 

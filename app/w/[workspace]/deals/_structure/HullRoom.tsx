@@ -3,7 +3,7 @@
 import { Group, SegmentedControl, Text, TextInput } from "@mantine/core";
 import { useAddress } from "@/app/_ui/useAddress";
 import { moveBoundary } from "@/lib/deals/classEdits";
-import { typedNumber } from "@/lib/deals/form";
+import { typedNumber } from "@/lib/deals/typed";
 import type { PricingReport } from "@/lib/pricing/report";
 import { useDeal } from "../_frame/dealContext";
 import { Hull } from "./hull/Hull";

@@ -3,11 +3,12 @@
 import { Alert, NativeSelect, SimpleGrid, TextInput } from "@mantine/core";
 import Link from "next/link";
 import type { DealForm } from "@/lib/deals/form";
+import { correlationWords } from "../_correlation/words";
 import { useDeal } from "../_frame/dealContext";
 
 /** What the deal is made of besides its classes: name, pool, market, maturity, correlation, loss law. */
 export function Terms() {
-  const { workspaceId, deal, form, change, mayEdit, pools, markets, scheduleKind, problemAt } = useDeal();
+  const { workspaceId, form, change, mayEdit, pools, markets, scheduleKind, problemAt } = useDeal();
   const text = (field: "name" | "maturity" | "years" | "rho", path: string) => ({
     size: "xs",
     disabled: !mayEdit,
@@ -16,7 +17,6 @@ export function Terms() {
     onChange: (event: { currentTarget: { value: string } }) =>
       change({ [field]: event.currentTarget.value }, field),
   });
-  const isFlat = !deal || deal.content.correlation.kind === "flat";
   return (
     <>
       {(pools.length === 0 || markets.length === 0) && (
@@ -54,10 +54,16 @@ export function Terms() {
         ) : (
           <TextInput label="Maturity (years)" {...text("years", "content.years")} />
         )}
-        {isFlat ? (
+        {form.correlation.kind === "flat" ? (
           <TextInput label="Flat asset correlation (%)" {...text("rho", "content.correlation")} />
         ) : (
-          <TextInput label="Correlation" size="xs" disabled value={deal.content.correlation.kind} />
+          <TextInput
+            label="Correlation (see its room)"
+            size="xs"
+            disabled
+            value={correlationWords[form.correlation.kind]}
+            error={problemAt("content.correlation")}
+          />
         )}
         <NativeSelect
           label="Loss law"

@@ -16,6 +16,7 @@ import { GeneralFields } from "./GeneralFields";
 import { MarketActions } from "./MarketActions";
 import { MarketPreview } from "./MarketPreview";
 import { NewerMarket } from "./NewerMarket";
+import { QuotedPoolFields } from "./QuotedPoolFields";
 import { ScheduleFields } from "./ScheduleFields";
 
 type OpenMarket = Operations["markets.open"]["output"];
@@ -34,11 +35,13 @@ export function MarketDesk({
   market,
   today,
   mayEdit,
+  pools,
 }: {
   workspaceId: string;
   market: OpenMarket | null;
   today: string;
   mayEdit: boolean;
+  pools: readonly { id: string; name: string }[];
 }) {
   const router = useRouter();
   const [saved, setSaved] = useState<Saved | null>(market);
@@ -47,16 +50,18 @@ export function MarketDesk({
   const [isBusy, setBusy] = useState(false);
   const [undone, setUndone] = useState<Kept | null>(null);
   const savedForm = useMemo(() => (saved ? formOf(saved) : blankForm(today)), [saved, today]);
-  const form = kept?.form ?? savedForm;
+  const form = kept ? { ...savedForm, ...kept.form } : savedForm;
   const settled = useDeferredValue(form);
   const reading = useMemo(() => readForm(settled), [settled]);
   const version = kept?.version ?? saved?.version ?? 0;
   const isDirty = kept !== null;
   const isBehind = kept !== null && saved !== null && kept.version !== saved.version;
-  const shownProblems = reading.ok || (!isDirty && !market) ? {} : reading.problems;
+  const told = Object.fromEntries(refused.map(({ path, message }) => [path, message]));
+  const shownProblems = reading.ok || (!isDirty && !market) ? told : reading.problems;
 
   const change = (part: Partial<MarketForm>) => {
     const next = { ...form, ...part };
+    setRefused([]);
     setKept(
       JSON.stringify(next) === JSON.stringify(kept?.base ?? savedForm)
         ? null
@@ -114,6 +119,7 @@ export function MarketDesk({
           <GeneralFields {...fields} />
           <DiscountFields {...fields} />
           <ScheduleFields {...fields} />
+          <QuotedPoolFields {...fields} pools={pools} />
         </Stack>
         <MarketPreview reading={reading} />
       </SimpleGrid>

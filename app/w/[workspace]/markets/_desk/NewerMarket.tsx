@@ -12,6 +12,7 @@ const labels: Record<keyof MarketForm, string> = {
   scheduleKind: "Payment dates",
   perYear: "Payments a year",
   holidays: "Holidays",
+  quotedPools: "Quoted pools",
 };
 
 /** Someone saved meanwhile: both versions of every field that differs, and the choice between them. */
@@ -66,5 +67,7 @@ function textOf(form: MarketForm, field: keyof MarketForm): string {
   const isFlat = form.discountKind === "flat";
   if ((field === "nodes" && isFlat) || (field === "rate" && !isFlat)) return "";
   if (field === "nodes") return form.nodes.map(({ years, rate }) => `${years}: ${rate}`).join(", ");
+  if (field === "quotedPools")
+    return form.quotedPools.map(({ name, quotes }) => `${name}: ${quotes.replace(/\s+/g, " ")}`).join("; ");
   return form[field].replace(/\s+/g, " ");
 }

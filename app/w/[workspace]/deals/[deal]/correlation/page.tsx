@@ -1,0 +1,7 @@
+import { Correlation } from "../../_correlation/Correlation";
+
+export const metadata = { title: "Correlation" };
+
+export default function Page() {
+  return <Correlation />;
+}
