@@ -25,6 +25,7 @@ export function wasmBackend(): RecursionBackend | null {
     addNames: functions.addNames,
     collect: functions.collect,
     moments: functions.moments,
+    cumulants: functions.cumulants,
     takeWork: functions.takeWork,
   };
 }

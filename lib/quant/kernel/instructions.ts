@@ -48,6 +48,15 @@ export interface RecursionBackend {
     table: number,
     out: number,
   ): void;
+  cumulants(
+    count: number,
+    scaled: number,
+    slopes: number,
+    sizes: number,
+    factors: number,
+    table: number,
+    out: number,
+  ): void;
   /** Row updates times factor values since the last call. */
   takeWork(): number;
 }

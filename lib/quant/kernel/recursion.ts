@@ -168,6 +168,16 @@ export class Recursion {
     return [read(0), read(1)];
   }
 
+  /** First four cumulants of the conditional sum of sizes at two factor values, without its law: [one, other] for each. */
+  cumulantsAt(one: number, other: number): Float64Array {
+    this.assertLoaded();
+    const { at, backend, reals } = this;
+    reals[at.factors >> 3] = one;
+    reals[(at.factors >> 3) + 1] = other;
+    backend.cumulants(this.count, at.scaled, at.slopes, at.sizes, at.factors, NORMAL_TABLE, at.overflow);
+    return reals.slice(at.overflow >> 3, (at.overflow >> 3) + 8);
+  }
+
   private assertLoaded(): void {
     if (loads.get(this.backend) !== this.load)
       throw new Error("These names have left the kernel: another recursion was loaded after them.");

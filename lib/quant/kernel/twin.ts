@@ -233,6 +233,32 @@ export function twinBackend(): RecursionBackend {
     }
   };
 
+  const cumulants: RecursionBackend["cumulants"] = (count, scaled, slopes, sizes, factors, table, out) => {
+    for (let lane = 0; lane < 2; lane++) {
+      const at = reals[(factors >> 3) + lane]!;
+      let first = 0;
+      let second = 0;
+      let third = 0;
+      let fourth = 0;
+      for (let i = 0; i < count; i++) {
+        const x = reals[(scaled >> 3) + i]! - reals[(slopes >> 3) + i]! * at;
+        const size = reals[(sizes >> 3) + i]!;
+        const chance = normalCdf(x, table);
+        const spread = chance * (1 - chance);
+        const square = size * size;
+        const weighted = square * spread;
+        first += size * chance;
+        second += weighted;
+        third += weighted * size * (1 - (chance + chance));
+        fourth += weighted * square * (1 - 6 * spread);
+      }
+      reals[(out >> 3) + lane] = first;
+      reals[(out >> 3) + 2 + lane] = second;
+      reals[(out >> 3) + 4 + lane] = third;
+      reals[(out >> 3) + 6 + lane] = fourth;
+    }
+  };
+
   return {
     kind: "twin",
     memory: () => reals.buffer,
@@ -247,6 +273,7 @@ export function twinBackend(): RecursionBackend {
     addNames,
     collect,
     moments,
+    cumulants,
     takeWork: () => {
       const done = work;
       work = 0;

@@ -66,10 +66,15 @@ function refinedUnit(amounts: readonly number[], divisor: number, total: number)
   return fits ? unit : null;
 }
 
-/** Steps for a shared grid: as many as names × steps allow, fine enough for the accuracy asked for. */
-const SHARED_WORK = 1_250_000;
-const COARSEST_UNIT = 4e-4;
+/**
+ * Units of a shared grid: 1e-5 for a handful of names, whose law has kinks at every sum, up to 1e-4 for 125, whose law has
+ * enough sums to be smooth; beyond 800 names it may grow again, as single amounts become small beside any strike.
+ */
 const FINEST_UNIT = 1e-5;
+const UNIT_A_NAME = 8e-7;
+const PLENTIFUL_UNIT = 1e-4;
+const UNIT_A_NAME_OF_MANY = 1.25e-7;
+const COARSEST_UNIT = 4e-4;
 
 /**
  * The grid for amounts: the exact lattice when there is one, else a shared grid that has the largest amount on a
@@ -105,7 +110,8 @@ export function gridOfShares(unit: number, shares: readonly GridShare[]): Amount
 function sharedUnit(amounts: readonly number[]): number {
   const largest = Math.max(...amounts);
   if (largest === 0) return 1;
-  const wanted = Math.min(COARSEST_UNIT, Math.max(FINEST_UNIT, amounts.length / SHARED_WORK));
+  const few = Math.min(PLENTIFUL_UNIT, Math.max(FINEST_UNIT, UNIT_A_NAME * amounts.length));
+  const wanted = Math.min(COARSEST_UNIT, Math.max(few, UNIT_A_NAME_OF_MANY * amounts.length));
   return largest / Math.ceil(largest / wanted);
 }
 

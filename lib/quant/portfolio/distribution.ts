@@ -60,17 +60,22 @@ export class PoolLaws {
     return grid === null || grid.isExact;
   }
 
+  /** An imposed unit asks for the recursion: that is how moments are audited. */
+  private get mayTakeMoments(): boolean {
+    return this.law.kind === "finite" && this.law.unit === undefined;
+  }
+
   /** The whole law at date j. `smooth` laws keep mean and variance; the others have no negative mass. */
   whole(kind: AmountKind, j: number, dependence: Dependence, smooth = true): Distribution {
     return this.keptLaw(`${kind} ${j} ${keyOf(dependence)} ${smooth}`, () =>
-      this.make(kind, j, dependence, { strikes: this.strikes[kind], smooth }),
+      this.make(kind, j, dependence, { strikes: this.strikes[kind], smooth, moments: this.mayTakeMoments }),
     );
   }
 
   /** The law at date j for questions about one strike that stands alone at this dependence, as under a base curve. */
   atStrike(kind: AmountKind, j: number, dependence: Dependence, strike: number, smooth = true): Distribution {
     return this.keptLaw(`${kind} ${j} ${keyOf(dependence)} ${smooth} ${strike}`, () =>
-      this.make(kind, j, dependence, { strikes: [strike], smooth }),
+      this.make(kind, j, dependence, { strikes: [strike], smooth, moments: this.mayTakeMoments }),
     );
   }
 
@@ -101,7 +106,12 @@ export class PoolLaws {
   /** The same for strikes in rising order, from one law. */
   expectedMinimaOnce(j: number, rho: number, strikes: readonly number[]): Float64Array {
     const probes = PROBED_AT.map((part) => strikes[Math.ceil(part * (strikes.length - 1))] ?? 0);
-    const asked = { strikes: [...new Set(probes)], smooth: true, minimumOnly: true };
+    const asked = {
+      strikes: [...new Set(probes)],
+      smooth: true,
+      moments: this.mayTakeMoments,
+      minimumOnly: true,
+    };
     return this.make("loss", j, { kind: "flat", rho }, asked).minima(strikes);
   }
 
@@ -115,10 +125,12 @@ export class PoolLaws {
   }
 
   private minimum(kind: AmountKind, j: number, dependence: Dependence, strike: number): number {
-    return this.make(kind, j, dependence, { strikes: [strike], smooth: true, minimumOnly: true }).between(
-      0,
-      strike,
-    );
+    return this.make(kind, j, dependence, {
+      strikes: [strike],
+      smooth: true,
+      moments: this.mayTakeMoments,
+      minimumOnly: true,
+    }).between(0, strike);
   }
 
   private make(kind: AmountKind, j: number, dependence: Dependence, asked: Asked): Distribution {

@@ -3,7 +3,13 @@ import type { AmountGrid } from "./amountGrid";
 import { atomic } from "./atomicDistribution";
 import type { Distribution } from "./distributionQuestions";
 import type { FactorNames } from "./factorNames";
+import { momentLaw } from "./momentMixture";
 import { oneFactorLaw } from "./oneFactorLaw";
+
+/** Pools of fewer names, and lattices, are always laid on a grid. */
+const FEWEST_FOR_MOMENTS = 400;
+/** Moments serve where their estimated error of E[min(X, K)] is below this at every strike. */
+const MOMENT_ERROR = 1e-7;
 
 /** What a distribution will be asked. */
 export interface Asked {
@@ -11,6 +17,8 @@ export interface Asked {
   readonly strikes: readonly number[];
   /** Keep mean and variance of amounts on the grid; else no negative mass. */
   readonly smooth: boolean;
+  /** Whether a large pool may be taken by its moments where they are exact enough. */
+  readonly moments: boolean;
   /** Only E[min(X, K)] at the last strike is wanted. */
   readonly minimumOnly?: boolean;
 }
@@ -29,7 +37,7 @@ export function factorDistribution(
   grid: AmountGrid,
   names: FactorNames,
   amounts: readonly number[],
-  { strikes, minimumOnly = false }: Asked,
+  { strikes, moments, minimumOnly = false }: Asked,
   count: (evaluations: number) => void,
 ): Distribution {
   const most = amounts.reduce((sum, amount) => sum + amount, 0);
@@ -40,17 +48,15 @@ export function factorDistribution(
     count(found.evaluations);
     return atomic(found);
   };
-  let wholeLaw: Distribution | null = null;
-  let cutLaw: Distribution | null = null;
-  const whole = () => {
-    wholeLaw ??= law(WHOLE);
-    return wholeLaw;
-  };
-  const cut = () => {
-    if (inside.length === 0) return whole();
-    cutLaw ??= law(highest);
-    return cutLaw;
-  };
+  const onGrid = once(() => law(WHOLE));
+  const byMoments = once(() => {
+    if (!moments || grid.isExact || amounts.length < FEWEST_FOR_MOMENTS) return null;
+    const found = momentLaw(Float64Array.from(amounts), names, inside);
+    count(found.evaluations);
+    return found.error <= MOMENT_ERROR ? found.questions : null;
+  });
+  const whole = () => byMoments() ?? onGrid();
+  const cut = once(() => byMoments() ?? (inside.length === 0 ? onGrid() : law(highest)));
   const isCovered = (strike: number) => strike <= highest;
   const isBeyond = (strike: number) => strike >= most - SAME;
   const at = (strike: number) => (isCovered(strike) ? cut() : whole());
@@ -79,7 +85,7 @@ export function factorDistribution(
     isAtom: (strike) => at(strike).isAtom(strike),
     quantile: (level) => whole().quantile(level),
     get atoms() {
-      return whole().atoms;
+      return onGrid().atoms;
     },
     get error() {
       return cut().error;
@@ -89,4 +95,13 @@ export function factorDistribution(
 
 function mean(amounts: readonly number[], { thresholds }: FactorNames): number {
   return amounts.reduce((sum, amount, i) => sum + amount * normalCdf(thresholds[i]!), 0);
+}
+
+/** A value worked out when it is first asked for. */
+function once<Value>(make: () => Value): () => Value {
+  let made: { readonly value: Value } | null = null;
+  return () => {
+    made ??= { value: make() };
+    return made.value;
+  };
 }

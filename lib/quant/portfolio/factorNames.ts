@@ -8,6 +8,15 @@ export interface FactorNames {
   readonly loadings: Float64Array;
 }
 
+/** c_i/√(1 − a_i²) and a_i/√(1 − a_i²): p_i(m) = Φ(scaled − slope · m). */
+export function conditionalSlopes({ thresholds, loadings }: FactorNames) {
+  const scales = loadings.map((loading) => Math.sqrt((1 - loading) * (1 + loading)));
+  return {
+    scaled: thresholds.map((threshold, i) => threshold / scales[i]!),
+    slopes: loadings.map((loading, i) => loading / scales[i]!),
+  };
+}
+
 /** Conditional default probability of each name, computed once for names that share threshold and loading. */
 export class ConditionalProbabilities {
   readonly values: Float64Array;

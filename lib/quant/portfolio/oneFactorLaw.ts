@@ -1,11 +1,12 @@
-import { Recursion, type RecursionNames } from "../kernel/recursion";
+import { Recursion } from "../kernel/recursion";
 import type { MixtureAccuracy } from "../maths/adaptiveMixture";
 import { normalCdf } from "../maths/normal";
 import type { AmountGrid } from "./amountGrid";
-import { type MixedLaw, mixedLaw, type PanelAccuracy } from "./factorMixture";
-import type { FactorNames } from "./factorNames";
+import { type MixedLaw, mixedLaw } from "./factorMixture";
+import { conditionalSlopes, type FactorNames } from "./factorNames";
 import type { AmountLaw } from "./lossLaw";
 import { LOWEST_UNSETTLED, momentBelow, unsettledInterval } from "./settledFactor";
+import type { PanelAccuracy } from "./settledPanels";
 import { transitionPanels } from "./transitionPanels";
 
 /** Accuracy of the mixture over the factor: E[min(X, K)] absolutely, tail probabilities relatively. */
@@ -49,7 +50,7 @@ export function oneFactorLaw(
     .sort((one, other) => one - other);
   const breaks = Int32Array.from([0, ...probed], (strike) => Math.ceil(strike - 1e-9));
   const negligible = minimumOnly ? NEGLIGIBLE_IN_MINIMUM : NEGLIGIBLE;
-  const flat = recursionNames(grid, names);
+  const flat = { ...grid, ...conditionalSlopes(names) };
   const recursion = new Recursion(flat, { top, breaks, negligible });
   if (names.loadings.every((loading) => loading === 0)) return independentLaw(grid, recursion, top);
   const isMonotone = names.loadings.every((loading) => loading >= 0);
@@ -86,18 +87,6 @@ function closedAbove(grid: AmountGrid, top: number, law: MixedLaw, moment: numbe
   masses.set(law.masses);
   masses[top + 1] = overflow;
   return { amounts, masses, overflow: 0, error, evaluations };
-}
-
-/** Names at one date as the recursion takes them. */
-export function recursionNames(grid: AmountGrid, { thresholds, loadings }: FactorNames): RecursionNames {
-  const scales = loadings.map((loading) => Math.sqrt((1 - loading) * (1 + loading)));
-  return {
-    steps: grid.steps,
-    weights: grid.weights,
-    sizes: grid.sizes,
-    scaled: thresholds.map((threshold, i) => threshold / scales[i]!),
-    slopes: loadings.map((loading, i) => loading / scales[i]!),
-  };
 }
 
 function meanSteps(grid: AmountGrid, { thresholds }: FactorNames): number {

@@ -79,6 +79,7 @@ describe("LAW: the compiled recursion", () => {
       expect(compiled.panel(factors, weights)).toEqual(twin.panel(factors, weights));
       expect(compiled.panel(factors, weights)).toEqual(twin.panel(factors, weights));
       expect(compiled.momentsAt(-1.3, 0.4)).toEqual(twin.momentsAt(-1.3, 0.4));
+      expect(compiled.cumulantsAt(-1.3, 0.4)).toEqual(twin.cumulantsAt(-1.3, 0.4));
     });
   }
 

@@ -436,3 +436,37 @@ function tabulatedDensity(x: v128, table: usize): v128 {
   const other = load2(table + (<usize>i32x4.extract_lane(index, 1) << 4));
   return v128.shuffle<f64>(one, other, 1, 3);
 }
+
+/** First four cumulants of the conditional sum of `sizes` at two factor values: [mean][second][third][fourth] for each. */
+export function cumulants(
+  count: i32,
+  scaled: usize,
+  slopes: usize,
+  sizes: usize,
+  factors: usize,
+  table: usize,
+  out: usize,
+): void {
+  const at = load2(factors);
+  let first = twice(0);
+  let second = twice(0);
+  let third = twice(0);
+  let fourth = twice(0);
+  for (let i: i32 = 0; i < count; i++) {
+    const steepness = v128.load64_splat(slopes + (<usize>i << 3));
+    const x = f64x2.sub(v128.load64_splat(scaled + (<usize>i << 3)), times(steepness, at));
+    const size = v128.load64_splat(sizes + (<usize>i << 3));
+    const p = normalCdf(x, table);
+    const spread = times(p, f64x2.sub(twice(1), p));
+    const square = times(size, size);
+    const weighted = times(square, spread);
+    first = plus(first, times(size, p));
+    second = plus(second, weighted);
+    third = plus(third, times(times(weighted, size), f64x2.sub(twice(1), plus(p, p))));
+    fourth = plus(fourth, times(times(weighted, square), f64x2.sub(twice(1), times(twice(6), spread))));
+  }
+  store2(out, first);
+  store2(out + 16, second);
+  store2(out + 32, third);
+  store2(out + 48, fourth);
+}
