@@ -112,7 +112,8 @@ function lossLawOf(valuation: Valuation, warnings: ReportWarning[]): PricingRepo
   const { atoms } = laws.whole("loss", last, dependence.dependence, laws.isExact);
   if (!atoms) return none("The large pool has no loss law on a grid.");
   const unit = laws.unit ?? 0.001;
-  const count = Math.round((portfolio.realisedLoss + atoms.amounts[atoms.amounts.length - 1]!) / unit) + 1;
+  const top = (portfolio.realisedLoss + atoms.amounts[atoms.amounts.length - 1]!) / unit;
+  const count = Math.ceil(top - 1e-7) + 1;
   const probabilities = new Array<number>(Math.max(1, count)).fill(0);
   for (let i = 0; i < atoms.amounts.length; i++) {
     const position = (portfolio.realisedLoss + atoms.amounts[i]!) / unit;

@@ -20,6 +20,9 @@ export function linearInterpolation({ arguments: xs, values: ys }: Knots, x: num
   return ys[i]! + ((ys[i + 1]! - ys[i]!) * (x - xs[i]!)) / (xs[i + 1]! - xs[i]!);
 }
 
+/** A secant below this is flat: ratios to it would leave the range of numbers. */
+const FLAT = 1e-150;
+
 /**
  * Slopes of the monotone cubic of Fritsch & Carlson (1980): the mean of adjacent secants, one-sided at the ends, zero
  * where the secants' signs differ, then limited to the circle α² + β² ≤ 9 from left to right.
@@ -36,7 +39,7 @@ export function monotoneSlopes({ arguments: xs, values: ys }: Knots): number[] {
   });
   for (let i = 0; i < count - 1; i++) {
     const secant = secants[i]!;
-    if (secant === 0) {
+    if (Math.abs(secant) < FLAT) {
       slopes[i] = 0;
       slopes[i + 1] = 0;
       continue;
