@@ -1,4 +1,5 @@
-import { type ClassText, textOf, typedNumber } from "../deals/form";
+import type { ClassText } from "../deals/form";
+import { textOf, typedNumber } from "../deals/typed";
 import type { Problem } from "../platform/errors";
 import type { LimitKind, SizedClass, SizingTarget } from "../pricing/sizing";
 

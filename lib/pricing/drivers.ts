@@ -1,3 +1,5 @@
+import { parSpread, swapLegs } from "../quant/market/defaultSwap";
+import { bumpedName } from "./bumps";
 import type { PricingProblem } from "./problem";
 import { checkRequest } from "./refusals";
 import type { PricingRequest } from "./request";
@@ -10,6 +12,8 @@ import {
   spreadDifference,
 } from "./sensitivitySection";
 import { type Valuation, valuationOf } from "./valuation";
+
+const BASIS_POINT = 1e-4;
 
 /** The common factors on every spread that convexity is shown at. */
 export const SPREAD_SCALES = [0.5, 0.9, 1.1, 1.5] as const;
@@ -36,8 +40,17 @@ export type MarketDriversAnswer =
   | { readonly ok: true; readonly classes: readonly MarketDriver[] }
   | { readonly ok: false; readonly problems: readonly PricingProblem[] };
 
+/** What one name does to every class, and the notional of its own contract that would offset its spread 01. */
+export interface NameDriver extends NameDifference {
+  /**
+   * Notional of protection on the name alone to the deal's maturity, at par, whose spread 01 is the class's own to this name;
+   * in currency.
+   */
+  readonly hedge: readonly (number | null)[];
+}
+
 export type NameDriversAnswer =
-  | { readonly ok: true; readonly names: readonly NameDifference[] }
+  | { readonly ok: true; readonly names: readonly NameDriver[] }
   | { readonly ok: false; readonly problems: readonly PricingProblem[] };
 
 /** What drives every class besides single names: spreads, recovery, correlation, rates, time, and the pool as its hedge. */
@@ -69,11 +82,27 @@ export function marketDrivers(raw: unknown): MarketDriversAnswer {
   return { ok: true, classes };
 }
 
-/** What the names at these places of the pool do to every class: their own spread 01 and jump to default. */
+/** What the names at these places of the pool do to every class: spread 01, jump to default, and hedges in the names. */
 export function nameDrivers(raw: unknown, places: readonly number[]): NameDriversAnswer {
   const read = readyValuation(raw);
   if (!read.ok) return read;
-  return { ok: true, names: namesDifferences(read.priced, read.today, places) };
+  const names = namesDifferences(read.priced, read.today, places).map((found, k) => {
+    const own = contractSpread01(read.priced, places[k]!);
+    const hedge = found.spread01.map((value) => (value === null || !own ? null : value / own));
+    return { ...found, hedge };
+  });
+  return { ok: true, names };
+}
+
+/** Spread 01 of protection sold on one name to the deal's maturity, struck at par, per unit notional. */
+function contractSpread01({ request, names, market }: Valuation, place: number): number | null {
+  const name = names[place]!;
+  const { schedule, discount } = market;
+  const bumped = bumpedName(request.pool[place]!, name, market, { shift: BASIS_POINT });
+  const par = name.curve.defaulted ? null : parSpread(schedule, discount, name.curve, name.recovery);
+  if (par === null || !bumped) return null;
+  const { protection, annuity } = swapLegs(schedule, discount, bumped.curve);
+  return par * annuity - (1 - name.recovery) * protection;
 }
 
 function readyValuation(

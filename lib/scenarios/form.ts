@@ -1,4 +1,4 @@
-import { typedNumber } from "../deals/form";
+import { typedNumber } from "../deals/typed";
 import type { Problem } from "../platform/errors";
 import { noShock, type Shock } from "../pricing/shock";
 

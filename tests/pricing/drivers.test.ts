@@ -76,4 +76,19 @@ describe("drivers", () => {
     expect(atPar.ok && atPar.classes[1]!.hedgeRatio).toBeCloseTo(1, 6);
     expect(atPar.ok && atPar.classes[0]!.hedgeRatio).toBeGreaterThan(1);
   });
+
+  it("hedge a pool of one name by that name's own contract, notional for notional", () => {
+    const alone = {
+      ...request,
+      pool: [request.pool[0]!],
+      tranches: [{ id: "all", attachment: 0, detachment: 1, recoveryPaydown: true }],
+    };
+    const answer = nameDrivers(alone, [0]);
+    const [hedge] = answer.ok ? answer.names[0]!.hedge : [null];
+    // The tranche takes defaults at the middle of each period, the name's contract in continuous time: they differ a little.
+    expect(hedge! / 1_000_000).toBeGreaterThan(0.995);
+    expect(hedge! / 1_000_000).toBeLessThan(1.005);
+    const defaulted = nameDrivers(request, [7]);
+    expect(defaulted.ok && defaulted.names[0]!.hedge).toEqual([null, null]);
+  });
 });

@@ -9,7 +9,7 @@ import { NothingToShow } from "../_frame/NothingToShow";
 import { PiecesProgress } from "../_frame/PiecesProgress";
 import { MarketTable } from "./MarketTable";
 import { NameTable } from "./NameTable";
-import { nameRows, sectorRows } from "./rows";
+import { nameMeasures, nameRows, sectorRows } from "./rows";
 import { SectorTable } from "./SectorTable";
 import { useDrivers } from "./useDrivers";
 
@@ -17,7 +17,7 @@ import { useDrivers } from "./useDrivers";
 export function Drivers() {
   const { request, form } = useDeal();
   const [over, setOver] = useAddress("over", "names");
-  const [measure, setMeasure] = useAddress("by", "spread01");
+  const [by, setMeasure] = useAddress("by", "spread01");
   const drivers = useDrivers(request);
   const classes = useMemo(
     () =>
@@ -34,7 +34,8 @@ export function Drivers() {
   if (!request || classes.length === 0)
     return <NothingToShow what="What moves a class" needsClass={request !== null} />;
   const currency = request.currency ?? "EUR";
-  const isJump = measure === "jump";
+  const measures = nameMeasures(currency);
+  const { value: measure, about } = measures.find(({ value }) => value === by) ?? measures[0]!;
   return (
     <Stack gap="lg">
       <section aria-labelledby="marketDrivers">
@@ -60,21 +61,16 @@ export function Drivers() {
               {over === "names" ? "Name by name" : "Sector by sector"}
             </Title>
             <Text size="sm" c="dimmed">
-              {isJump
-                ? `Change of value in ${currency} when one name defaults today at its recovery, what is then paid included.`
-                : `Change of value in ${currency} when one name's spreads widen by 1 bp.`}
+              {about}
             </Text>
           </div>
           <Group gap="xs" className="screenOnly">
             <SegmentedControl
               size="xs"
               aria-label="What is shown"
-              value={isJump ? "jump" : "spread01"}
+              value={measure}
               onChange={setMeasure}
-              data={[
-                { value: "spread01", label: "Spread 01" },
-                { value: "jump", label: "Jump to default" },
-              ]}
+              data={measures.map(({ value, label }) => ({ value, label }))}
             />
             <SegmentedControl
               size="xs"
@@ -91,12 +87,12 @@ export function Drivers() {
         <PiecesProgress pieces={drivers.names} total={drivers.pieces} what="names" />
         {drivers.names.problem && <Alert color="red">{drivers.names.problem}</Alert>}
         {over === "names" ? (
-          <NameTable rows={rows} classes={classes} isJump={isJump} currency={currency} />
+          <NameTable rows={rows} classes={classes} measure={measure} currency={currency} />
         ) : (
           <SectorTable
             rows={sectorRows(rows, classes.length)}
             classes={classes}
-            isJump={isJump}
+            measure={measure}
             currency={currency}
           />
         )}

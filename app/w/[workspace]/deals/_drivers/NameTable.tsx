@@ -10,7 +10,7 @@ import { useAddress } from "@/app/_ui/useAddress";
 import { useKept } from "@/app/_ui/useKept";
 import { BarCell } from "./BarCell";
 import styles from "./drivers.module.css";
-import type { NameRow } from "./rows";
+import { type NameMeasure, type NameRow, nameMeasures } from "./rows";
 
 export interface NamedClass {
   readonly id: string;
@@ -24,18 +24,18 @@ const FOLLOWS = "Not worked out yet.";
 export function NameTable({
   rows,
   classes,
-  isJump,
+  measure,
   currency,
 }: {
   rows: readonly NameRow[];
   classes: readonly NamedClass[];
-  isJump: boolean;
+  measure: NameMeasure;
   currency: string;
 }) {
   const [sorting, setSorting] = useAddress("sort", "");
   const [kept, setHidden] = useKept<readonly string[]>("columns name drivers");
   const hidden = kept ?? [];
-  const columns = useMemo(() => columnsOf(classes, isJump, currency), [classes, isJump, currency]);
+  const columns = useMemo(() => columnsOf(classes, measure, currency), [classes, measure, currency]);
   const shown = columns.filter(({ key }, i) => i === 0 || !hidden.includes(key));
   const [sortKey = "", direction = "down"] = sorting === "" ? [columns[3]?.key, "size"] : sorting.split("|");
   const ordered = useMemo(
@@ -66,7 +66,7 @@ export function NameTable({
     <div>
       <Group justify="end" my={4}>
         <TableTools
-          name={isJump ? "jump to default by name" : "spread 01 by name"}
+          name={`${nameMeasures(currency).find(({ value }) => value === measure)?.label} by name`}
           table={{ columns: shown, rows: ordered }}
           choosable={columns.slice(1)}
           hidden={hidden}
@@ -130,7 +130,7 @@ export function NameTable({
 
 type Column = FigureColumn<NameRow>;
 
-function columnsOf(classes: readonly NamedClass[], isJump: boolean, currency: string): Column[] {
+function columnsOf(classes: readonly NamedClass[], measure: NameMeasure, currency: string): Column[] {
   return [
     { key: "name", header: "Name", unit: "text", value: ({ id, name }) => (name ? `${id} · ${name}` : id) },
     { key: "sector", header: "Sector", unit: "text", value: ({ sector }) => sector },
@@ -146,8 +146,8 @@ function columnsOf(classes: readonly NamedClass[], isJump: boolean, currency: st
         key: `class ${id}`,
         header: name,
         unit: "money",
-        unitWords: isJump ? `${currency} at default` : `${currency} for +1 bp`,
-        value: (row) => (isJump ? row.jump : row.spread01)?.[i] ?? null,
+        unitWords: nameMeasures(currency).find((row) => row.value === measure)?.words ?? currency,
+        value: (row) => row.figures?.[measure][i] ?? null,
       }),
     ),
   ];

@@ -5,18 +5,18 @@ import { FigureTable } from "@/app/_ui/table/FigureTable";
 import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import { BarCell } from "./BarCell";
 import type { NamedClass } from "./NameTable";
-import type { SectorRow } from "./rows";
+import { type NameMeasure, nameMeasures, type SectorRow } from "./rows";
 
 /** Sector by sector: summed spread 01s, or the default in the sector that moves a class most. */
 export function SectorTable({
   rows,
   classes,
-  isJump,
+  measure,
   currency,
 }: {
   rows: readonly SectorRow[];
   classes: readonly NamedClass[];
-  isJump: boolean;
+  measure: NameMeasure;
   currency: string;
 }) {
   const columns = useMemo<FigureColumn<SectorRow>[]>(
@@ -35,18 +35,21 @@ export function SectorTable({
           key: `class ${id}`,
           header: name,
           unit: "money",
-          unitWords: isJump ? `${currency}, furthest of one default` : `${currency} for +1 bp`,
-          value: (row) => (isJump ? row.jump : row.spread01)[i] ?? null,
+          unitWords:
+            measure === "jump"
+              ? `${currency}, furthest of one default`
+              : (nameMeasures(currency).find((row) => row.value === measure)?.words ?? currency),
+          value: (row) => row.figures[measure][i] ?? null,
         }),
       ),
     ],
-    [classes, isJump, currency],
+    [classes, measure, currency],
   );
   const most = (column: FigureColumn<SectorRow>) =>
     Math.max(...rows.map((row) => Math.abs(Number(column.value(row) ?? 0))));
   return (
     <FigureTable
-      name={isJump ? "jump to default by sector" : "spread 01 by sector"}
+      name={`${nameMeasures(currency).find(({ value }) => value === measure)?.label} by sector`}
       columns={columns}
       rows={rows}
       keyOf={({ sector }) => sector}

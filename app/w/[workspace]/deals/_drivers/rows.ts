@@ -1,4 +1,4 @@
-import type { NameDriversAnswer } from "@/lib/pricing/drivers";
+import type { NameDriver, NameDriversAnswer } from "@/lib/pricing/drivers";
 import type { NameInput } from "@/lib/pricing/request";
 
 /** A name's drivers; one figure a class in the order of the classes, undefined while not worked out. */
@@ -8,8 +8,35 @@ export interface NameRow {
   readonly sector: string;
   readonly notional: number;
   readonly isDefaulted: boolean;
-  readonly spread01: readonly (number | null)[] | undefined;
-  readonly jump: readonly (number | null)[] | undefined;
+  readonly figures: Readonly<Record<NameMeasure, readonly (number | null)[]>> | undefined;
+}
+
+/** What a name's figures are of. */
+export type NameMeasure = "spread01" | "jump" | "hedge";
+
+export function nameMeasures(
+  currency: string,
+): { value: NameMeasure; label: string; words: string; about: string }[] {
+  return [
+    {
+      value: "spread01",
+      label: "Spread 01",
+      words: `${currency} for +1 bp`,
+      about: `Change of value in ${currency} when one name's spreads widen by 1 bp.`,
+    },
+    {
+      value: "jump",
+      label: "Jump to default",
+      words: `${currency} at default`,
+      about: `Change of value in ${currency} when one name defaults today at its recovery, what is then paid included.`,
+    },
+    {
+      value: "hedge",
+      label: "Hedge in the name",
+      words: `notional, ${currency}`,
+      about: `Notional in ${currency} of protection to buy on the name alone, to the deal's maturity, that offsets its spread 01.`,
+    },
+  ];
 }
 
 /** The names of a pool with what is worked out of them so far. */
@@ -26,19 +53,20 @@ export function nameRows(
     sector: sector || "No sector",
     notional,
     isDefaulted: credit.kind === "defaulted",
-    spread01: known.get(id)?.spread01,
-    jump: known.get(id)?.jumpToDefault,
+    figures: figuresOf(known.get(id)),
   }));
 }
 
-/** A sector's drivers: its names' spread 01s summed, and the default among them that moves each class most. */
+function figuresOf(driver: NameDriver | undefined): NameRow["figures"] {
+  return driver && { spread01: driver.spread01, jump: driver.jumpToDefault, hedge: driver.hedge };
+}
+
+/** A sector's drivers: spread 01s and hedges of its names summed, and the default among them that moves each class most. */
 export interface SectorRow {
   readonly sector: string;
   readonly names: number;
   readonly notional: number;
-  readonly isWhole: boolean;
-  readonly spread01: readonly (number | null)[];
-  readonly jump: readonly (number | null)[];
+  readonly figures: Readonly<Record<NameMeasure, readonly (number | null)[]>>;
 }
 
 export function sectorRows(rows: readonly NameRow[], classes: number): SectorRow[] {
@@ -46,21 +74,24 @@ export function sectorRows(rows: readonly NameRow[], classes: number): SectorRow
   for (const row of rows) sectors.set(row.sector, [...(sectors.get(row.sector) ?? []), row]);
   return [...sectors].map(([sector, names]) => {
     const live = names.filter(({ isDefaulted }) => !isDefaulted);
-    const found = (i: number, pick: (row: NameRow) => readonly (number | null)[] | undefined) =>
-      live.flatMap((row) => pick(row)?.[i] ?? []);
+    const found = (measure: NameMeasure, i: number) =>
+      live.flatMap(({ figures }) => figures?.[measure][i] ?? []);
     const each = Array.from({ length: classes }, (_, i) => i);
     return {
       sector,
       names: names.length,
       notional: names.reduce((sum, { notional }) => sum + notional, 0),
-      isWhole: live.every((row) => row.spread01 !== undefined),
-      spread01: each.map((i) => {
-        const parts = found(i, (row) => row.spread01);
-        return parts.length > 0 ? parts.reduce((sum, value) => sum + value, 0) : null;
-      }),
-      jump: each.map((i) => furthest(found(i, (row) => row.jump))),
+      figures: {
+        spread01: each.map((i) => total(found("spread01", i))),
+        jump: each.map((i) => furthest(found("jump", i))),
+        hedge: each.map((i) => total(found("hedge", i))),
+      },
     };
   });
+}
+
+function total(values: readonly number[]): number | null {
+  return values.length > 0 ? values.reduce((sum, value) => sum + value, 0) : null;
 }
 
 function furthest(values: readonly number[]): number | null {

@@ -111,6 +111,7 @@ export function GridView({
           const place = columns.indexOf(column) - 1;
           if (place < 0) return <strong>{signed(row.step, isRelative ? 100 : 10_000)}</strong>;
           const cell = cells[cellAt(grid, row.index, place)];
+          if (cell === undefined) return <span title="Not worked out yet.">·</span>;
           const change = moved(row, place);
           return (
             <Cell
@@ -118,7 +119,7 @@ export function GridView({
               unit={unitOf(measure)}
               share={change === null || most === 0 ? 0 : change / most}
               isWorse={change !== null && (measure === "value" ? change < 0 : change > 0)}
-              isHeld={cell?.ok === true && cell.isHeld}
+              isHeld={cell.ok && cell.isHeld}
               otherwise={otherwiseOf(cell)}
             />
           );
@@ -175,8 +176,7 @@ function Cell({
   );
 }
 
-function otherwiseOf(cell: StressCell | undefined): string {
-  if (cell === undefined) return "Not worked out yet.";
+function otherwiseOf(cell: StressCell): string {
   if (!cell.ok) return cell.problems[0]?.message ?? "This cell cannot be priced.";
   return "The class has no such figure here.";
 }

@@ -6,6 +6,7 @@ import { useState } from "react";
 import { call } from "@/app/_ui/call";
 import { Problems } from "@/app/_ui/Problems";
 import type { Problem } from "@/lib/platform/errors";
+import { canonicalJson } from "@/lib/pricing/canonical";
 import { blankShock, type ShockReading, shockFormOf } from "@/lib/scenarios/form";
 import { useDeal } from "../_frame/dealContext";
 import type { Scenarios, StressText } from "./text";
@@ -32,7 +33,7 @@ export function ScenarioBar({
   const chosen = scenarios.find(({ id }) => id === text.of?.id);
   const isChanged =
     chosen !== undefined &&
-    JSON.stringify(reading.ok ? reading.shock : null) !== JSON.stringify(chosen.content.shock);
+    canonicalJson(reading.ok ? reading.shock : null) !== canonicalJson(chosen.content.shock);
 
   const choose = (id: string) => {
     const next = scenarios.find((scenario) => scenario.id === id);

@@ -3,6 +3,8 @@
 import { Stack } from "@mantine/core";
 import { useMemo } from "react";
 import { useKept } from "@/app/_ui/useKept";
+import { canonicalJson } from "@/lib/pricing/canonical";
+import { noShock, type Shock } from "@/lib/pricing/shock";
 import { blankGrid, blankShock, readShock } from "@/lib/scenarios/form";
 import { useDeal } from "../_frame/dealContext";
 import { NothingToShow } from "../_frame/NothingToShow";
@@ -28,6 +30,10 @@ export function Stress({ work, kept }: { work: Work; kept: Scenarios }) {
       })),
     [request, form.classes],
   );
+  const own = useMemo(
+    () => (reading.ok && !isKept(reading.shock, kept.scenarios) ? reading.shock : null),
+    [reading, kept.scenarios],
+  );
   if (!request || classes.length === 0)
     return <NothingToShow what="Stress of a class" needsClass={request !== null} />;
   const change = (part: Partial<StressText>) => setTyped({ ...text, ...part });
@@ -48,12 +54,7 @@ export function Stress({ work, kept }: { work: Work; kept: Scenarios }) {
           onChange={(shock) => change({ shock })}
         />
       </section>
-      <ScenarioTable
-        request={request}
-        classes={classes}
-        scenarios={kept.scenarios}
-        typed={reading.ok ? reading.shock : null}
-      />
+      <ScenarioTable request={request} classes={classes} scenarios={kept.scenarios} typed={own} />
       <GridDesk
         request={request}
         classes={classes}
@@ -63,5 +64,13 @@ export function Stress({ work, kept }: { work: Work; kept: Scenarios }) {
         onChange={(grid) => change({ grid })}
       />
     </Stack>
+  );
+}
+
+/** Whether a shock moves nothing or is a kept scenario's: then it needs no row of its own. */
+function isKept(shock: Shock, scenarios: Scenarios["scenarios"]): boolean {
+  const text = canonicalJson(shock);
+  return [noShock, ...scenarios.map(({ content }) => content.shock)].some(
+    (one) => canonicalJson(one) === text,
   );
 }
