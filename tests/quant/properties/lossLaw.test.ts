@@ -24,7 +24,7 @@ function minima(request: Parameters<typeof reportOf>[0]): number[] {
 describe("LAW: the loss law of random pools", () => {
   it("has mass one, no negative mass and the mean Σ l p, within 1e-12", () => {
     fc.assert(
-      fc.property(markets, poolsWithDependence(20), (market, [pool, correlation]) => {
+      fc.property(markets, poolsWithDependence(14), (market, [pool, correlation]) => {
         const { lossLaw, pool: figures } = reportOf(
           requestOf(market, pool, correlation, { include: ["lossLaw"] }),
         );
@@ -35,13 +35,13 @@ describe("LAW: the loss law of random pools", () => {
         expect(Math.abs(mean - figures.expectedLoss)).toBeLessThanOrEqual(1e-12);
         expect(Math.min(...probabilities)).toBeGreaterThanOrEqual(0);
       }),
-      runs(100),
+      runs(60),
     );
   });
 
   it("E[min(L, K)] rises in K, is concave, has a slope within [0, 1], and ends at the expected loss", () => {
     fc.assert(
-      fc.property(poolsWithDependence(25), strikeLadders, ([pool, correlation], strikes) => {
+      fc.property(poolsWithDependence(20), strikeLadders, ([pool, correlation], strikes) => {
         const request = requestOf(onePeriod, pool, correlation, { tranches: equities(strikes.slice(1)) });
         const values = [0, ...minima(request)];
         let before = 1;
@@ -57,14 +57,14 @@ describe("LAW: the loss law of random pools", () => {
           Math.abs(values[values.length - 1]! - reportOf(request).pool.expectedLoss),
         ).toBeLessThanOrEqual(1e-11);
       }),
-      runs(150),
+      runs(90),
     );
   });
 
   it("does not change when the names are permuted, to 1e-13", () => {
     fc.assert(
       fc.property(
-        poolsWithDependence(25).chain(([pool, correlation]) =>
+        poolsWithDependence(20).chain(([pool, correlation]) =>
           fc.tuple(
             fc.constant(pool),
             fc.shuffledSubarray(pool, { minLength: pool.length }),
@@ -80,7 +80,7 @@ describe("LAW: the loss law of random pools", () => {
             expect(Math.abs(value - other![i]!)).toBeLessThanOrEqual(1e-13);
         },
       ),
-      runs(150),
+      runs(90),
     );
   });
 
@@ -100,7 +100,7 @@ describe("LAW: the loss law of random pools", () => {
             variance += losses[i]! * losses[j]! * (joint - row[i]! * pairs!.jointDefault[j]![j]!);
         expect(Math.abs(tranches[0]!.standardDeviation! ** 2 - variance)).toBeLessThanOrEqual(1e-10);
       }),
-      runs(150),
+      runs(90),
     );
   });
 });
@@ -131,7 +131,7 @@ describe("CORRELATION: the ends and the order", () => {
           expect(Math.abs(found[k]! - expected)).toBeLessThanOrEqual(1e-12);
         }
       }),
-      runs(150),
+      runs(90),
     );
   });
 
@@ -150,7 +150,7 @@ describe("CORRELATION: the ends and the order", () => {
           expect(Math.abs(value - sectors[i]!)).toBeLessThanOrEqual(1e-12);
         }
       }),
-      runs(100),
+      runs(60),
     );
   });
 
@@ -174,7 +174,7 @@ describe("CORRELATION: the ends and the order", () => {
           }
         },
       ),
-      runs(100),
+      runs(60),
     );
   });
 
@@ -189,7 +189,7 @@ describe("CORRELATION: the ends and the order", () => {
         for (const [i, value] of one!.entries())
           expect(Math.abs(value - other![i]!)).toBeLessThanOrEqual(1e-11);
       }),
-      runs(100),
+      runs(60),
     );
   });
 
@@ -201,7 +201,7 @@ describe("CORRELATION: the ends and the order", () => {
         );
         for (const [i, value] of low!.entries()) expect(high![i]!).toBeLessThanOrEqual(value + 1e-8);
       }),
-      runs(100),
+      runs(60),
     );
   });
 });
@@ -236,7 +236,7 @@ describe("LARGE: many small names", () => {
           if (gap > 1e-7) expect(half / gap).toBeLessThanOrEqual(0.62);
         },
       ),
-      runs(30),
+      runs(18),
     );
   });
 });
@@ -244,7 +244,7 @@ describe("LARGE: many small names", () => {
 describe("TRANCHE: quantiles, hits and moments fit one another", () => {
   it("hit ≥ expected loss ≥ exhaustion; the deviation is at most that of all or nothing; shortfalls lie above quantiles", () => {
     fc.assert(
-      fc.property(poolsWithDependence(25), strikeLadders, ([pool, correlation], strikes) => {
+      fc.property(poolsWithDependence(20), strikeLadders, ([pool, correlation], strikes) => {
         for (const tranche of reportOf(
           requestOf(onePeriod, pool, correlation, { tranches: classes(strikes) }),
         ).tranches) {
@@ -263,7 +263,7 @@ describe("TRANCHE: quantiles, hits and moments fit one another", () => {
           }
         }
       }),
-      runs(150),
+      runs(90),
     );
   });
 });

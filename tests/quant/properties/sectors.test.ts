@@ -35,7 +35,7 @@ describe("LAW: sectors", () => {
             variance += losses[i]! * losses[j]! * (joint - row[i]! * jointDefault[j]![j]!);
         expect(Math.abs(report.tranches[5]!.standardDeviation! ** 2 - variance)).toBeLessThanOrEqual(1e-10);
       }),
-      runs(12),
+      runs(8),
     );
   });
 
@@ -49,7 +49,7 @@ describe("LAW: sectors", () => {
         for (const [i, { expectedLoss }] of one!.entries())
           expect(Math.abs(expectedLoss! - other![i]!.expectedLoss!)).toBeLessThanOrEqual(1e-13);
       }),
-      runs(10),
+      runs(6),
     );
   });
 });

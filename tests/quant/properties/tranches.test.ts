@@ -33,7 +33,7 @@ describe("TRANCHE: classes that share the pool out between them", () => {
         expect(Math.abs(together("protectionLeg") - whole.protectionLeg)).toBeLessThanOrEqual(1e-11);
         expect(Math.abs(together("annuity") - whole.annuity)).toBeLessThanOrEqual(1e-10);
       }),
-      runs(60),
+      runs(36),
     );
   });
 
@@ -67,7 +67,7 @@ describe("TRANCHE: classes that share the pool out between them", () => {
           expect(Math.abs(value - whole!.sellerValue!)).toBeLessThanOrEqual(1e-10 * figures.notional);
         },
       ),
-      runs(100),
+      runs(60),
     );
   });
 
@@ -102,7 +102,7 @@ describe("TRANCHE: classes that share the pool out between them", () => {
           expect(Math.abs(paid + received)).toBeLessThanOrEqual(1e-12 * scale);
         }
       }),
-      runs(30),
+      runs(18),
     );
   });
 
@@ -116,7 +116,7 @@ describe("TRANCHE: classes that share the pool out between them", () => {
           else expect(Math.abs(parSpread * annuity! - protectionLeg!)).toBeLessThanOrEqual(1e-14);
         }
       }),
-      runs(60),
+      runs(36),
     );
   });
 
@@ -136,7 +136,7 @@ describe("TRANCHE: classes that share the pool out between them", () => {
           expect(Math.abs(tranche.annuity! - annuity)).toBeLessThanOrEqual(1e-13);
         }
       }),
-      runs(100),
+      runs(60),
     );
   });
 });
