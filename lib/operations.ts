@@ -9,6 +9,8 @@ import { commands as jobCommands } from "./jobs/commands";
 import { queries as jobQueries } from "./jobs/queries";
 import { commands as marketCommands } from "./markets/commands";
 import { queries as marketQueries } from "./markets/queries";
+import { commands as noticeCommands } from "./notices/commands";
+import { queries as noticeQueries } from "./notices/queries";
 import type { AnyOperation } from "./platform/run";
 import { commands as poolCommands } from "./pools/commands";
 import { queries as poolQueries } from "./pools/queries";
@@ -42,6 +44,8 @@ const rooms = [
   jobQueries,
   discussionCommands,
   discussionQueries,
+  noticeCommands,
+  noticeQueries,
   activityQueries,
 ] as const;
 

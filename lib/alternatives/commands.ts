@@ -1,6 +1,6 @@
 import { randomUUID } from "node:crypto";
 import { overlapProblems } from "../deals/check";
-import { dealIn } from "../deals/commands";
+import { dealIn } from "../deals/find";
 import { notFound, Refusal, refuse } from "../platform/errors";
 import { defineCommand } from "../platform/operation";
 import { asEditor } from "../workspaces/guards";

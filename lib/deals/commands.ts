@@ -1,10 +1,12 @@
 import { randomUUID } from "node:crypto";
 import { marketIn } from "../markets/commands";
+import { notifyFollowers } from "../notices/notify";
 import { notFound, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand, type QueryContext } from "../platform/operation";
 import { poolIn } from "../pools/commands";
 import { asEditor } from "../workspaces/guards";
 import { checkDeal } from "./check";
+import { dealIn } from "./find";
 import { partsOf } from "./parts";
 import { archiveInput, copyInput, createInput, type DealContent, saveInput, versionInput } from "./schema";
 
@@ -122,12 +124,13 @@ async function makeDeal(
 }
 
 async function writeVersion(
-  { tx, actor, now, record, emit }: CommandContext,
+  context: CommandContext,
   workspaceId: string,
   before: DealRow,
   deal: DealFields,
   kind: string,
 ) {
+  const { tx, actor, now, record, emit } = context;
   const version = before.version + 1;
   await tx.deal.update({ where: { id: before.id }, data: { ...deal, version } });
   await tx.dealVersion.create({
@@ -143,14 +146,8 @@ async function writeVersion(
     after: { ...deal, version },
   });
   await emit({ workspaceId, dealId: before.id, kind, payload: { dealId: before.id, version } });
-}
-
-/** The deal, if it is the workspace's; locked when it is about to be written. */
-export async function dealIn({ tx }: QueryContext, workspaceId: string, dealId: string, isLocked = false) {
-  if (isLocked) await tx.$queryRaw`SELECT id FROM "deal" WHERE id = ${dealId} FOR UPDATE`;
-  const deal = await tx.deal.findFirst({ where: { id: dealId, workspaceId } });
-  if (!deal) throw notFound("deal");
-  return deal;
+  const payload = { version, words: deal.name };
+  await notifyFollowers(context, { workspaceId, dealId: before.id, kind: "deal.changed", payload });
 }
 
 export const commands = { create, save, restoreVersion, copy, archive };

@@ -1,7 +1,7 @@
 import type { MarketContent } from "../markets/schema";
 import type { QueryContext } from "../platform/operation";
 import { requestHash } from "../pricing/canonical";
-import { dealIn } from "./commands";
+import { dealIn } from "./find";
 import { partsOf } from "./parts";
 import { toRequest } from "./request";
 import type { DealContent } from "./schema";

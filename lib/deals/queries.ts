@@ -5,8 +5,8 @@ import { defineQuery } from "../platform/operation";
 import { poolIn } from "../pools/commands";
 import { mayOf } from "../workspaces/policy";
 import { inWorkspace } from "../workspaces/schema";
-import { dealIn } from "./commands";
 import { currentHash, requestOfDeal } from "./current";
+import { dealIn } from "./find";
 import { partsOf } from "./parts";
 import { type DealContent, dealInput, partsInput } from "./schema";
 

@@ -1,28 +1,32 @@
 import { randomUUID } from "node:crypto";
-import { dealIn } from "../deals/commands";
+import { dealIn } from "../deals/find";
+import { notify } from "../notices/notify";
 import type { Membership } from "../platform/accounts/actor";
 import { notFound, refuse, staleVersion } from "../platform/errors";
 import { type CommandContext, defineCommand } from "../platform/operation";
+import { unpackedReport } from "../runs/stored";
 import { need } from "../workspaces/policy";
+import { type Anchor, figureAt } from "./anchor";
 import { mayChange, mayComment } from "./policy";
-import { deleteInput, editInput, replyInput, resolveInput, startInput } from "./schema";
+import { deleteInput, editInput, replyInput, resolveInput, seenInput, startInput } from "./schema";
 
 const MOST_A_MINUTE = 20;
 
 const start = defineCommand({
   name: "discussion.start",
   input: startInput,
-  async run(context, { workspaceId, dealId, body }) {
+  async run(context, { workspaceId, dealId, body, mentions, anchor }) {
     await asCommenter(context, workspaceId);
     await dealIn(context, workspaceId, dealId);
     const { tx, actor, now } = context;
+    await checkAnchor(context, dealId, anchor);
     const threadId = randomUUID();
     await tx.thread.create({
       data: {
         id: threadId,
         workspaceId,
         dealId,
-        anchor: { kind: "deal" },
+        anchor,
         createdById: actor.userId,
         createdAt: now,
       },
@@ -30,7 +34,7 @@ const start = defineCommand({
     const commentId = await addComment(
       context,
       { id: threadId, workspaceId, dealId },
-      body,
+      { body, mentions },
       "comment.posted",
     );
     return { threadId, commentId };
@@ -40,10 +44,10 @@ const start = defineCommand({
 const reply = defineCommand({
   name: "discussion.reply",
   input: replyInput,
-  async run(context, { workspaceId, threadId, body }) {
+  async run(context, { workspaceId, threadId, body, mentions }) {
     await asCommenter(context, workspaceId);
     const thread = await threadIn(context, workspaceId, threadId);
-    return { commentId: await addComment(context, thread, body, "comment.replied") };
+    return { commentId: await addComment(context, thread, { body, mentions }, "comment.replied") };
   },
 });
 
@@ -90,6 +94,28 @@ const resolve = defineCommand({
   },
 });
 
+/** How far a person has read: for their own unread marks only, so neither record nor event. */
+const seen = defineCommand({
+  name: "discussion.seen",
+  input: seenInput,
+  async run({ tx, actor, now, member }, { workspaceId, dealId, threadIds }) {
+    await member(workspaceId);
+    const threads = await tx.thread.findMany({
+      where: { workspaceId, dealId, id: { in: threadIds } },
+      select: { id: true },
+    });
+    for (const { id: threadId } of threads) {
+      const key = { threadId, userId: actor.userId };
+      await tx.threadSeen.upsert({
+        where: { threadId_userId: key },
+        create: { ...key, seenAt: now },
+        update: { seenAt: now },
+      });
+    }
+    return null;
+  },
+});
+
 interface ThreadPlace {
   readonly id: string;
   readonly workspaceId: string;
@@ -105,8 +131,8 @@ async function asCommenter(context: CommandContext, workspaceId: string): Promis
 async function addComment(
   context: CommandContext,
   thread: ThreadPlace,
-  body: string,
-  kind: string,
+  { body, mentions }: { body: string; mentions: readonly string[] },
+  kind: "comment.posted" | "comment.replied",
 ): Promise<string> {
   const { tx, actor, now } = context;
   const recent = await tx.comment.count({
@@ -116,10 +142,38 @@ async function addComment(
     throw refuse("limited", "tooManyComments", "You have written many comments in a minute: wait a moment.");
   const id = randomUUID();
   await tx.comment.create({
-    data: { id, threadId: thread.id, authorId: actor.userId, body, createdAt: now },
+    data: { id, threadId: thread.id, authorId: actor.userId, body, mentions: [...mentions], createdAt: now },
   });
   await told(context, thread, kind, id, undefined, { body });
+  await tellOthers(context, thread, id, { body, mentions });
   return id;
+}
+
+/** Whom the comment names, and who else takes part in the thread, have it in their inbox. */
+async function tellOthers(
+  context: CommandContext,
+  { id: threadId, workspaceId, dealId }: ThreadPlace,
+  commentId: string,
+  { body, mentions }: { body: string; mentions: readonly string[] },
+): Promise<void> {
+  const payload = { threadId, commentId, words: body.slice(0, 200) };
+  await notify(context, mentions, { workspaceId, dealId, kind: "mention", payload });
+  const others = await context.tx.comment.findMany({
+    where: { threadId, authorId: { notIn: [...mentions] } },
+    select: { authorId: true },
+    distinct: ["authorId"],
+  });
+  const authors = others.map(({ authorId }) => authorId);
+  await notify(context, authors, { workspaceId, dealId, kind: "reply", payload });
+}
+
+/** A figure is pinned as it stands in a run of the deal. */
+async function checkAnchor({ tx }: CommandContext, dealId: string, anchor: Anchor): Promise<void> {
+  if (anchor.kind !== "figure") return;
+  const run = await tx.run.findFirst({ where: { id: anchor.runId, dealId }, select: { report: true } });
+  if (!run) throw notFound("run");
+  if (figureAt(unpackedReport(run.report), anchor.path) === null)
+    throw refuse("invalid", "noFigure", "This run has no such figure to point at.", "anchor.path");
 }
 
 async function told(
@@ -153,4 +207,4 @@ async function ownComment(context: CommandContext, workspaceId: string, commentI
   return { comment, thread: comment.thread };
 }
 
-export const commands = { start, reply, edit, remove, resolve };
+export const commands = { start, reply, edit, remove, resolve, seen };

@@ -1,5 +1,5 @@
 import { randomUUID } from "node:crypto";
-import { dealIn } from "../deals/commands";
+import { dealIn } from "../deals/find";
 import { notFound, Refusal, refuse } from "../platform/errors";
 import { defineCommand, type QueryContext } from "../platform/operation";
 import { checkRequest } from "../pricing/refusals";

@@ -1,4 +1,4 @@
-import { dealIn } from "../deals/commands";
+import { dealIn } from "../deals/find";
 import { dealInput } from "../deals/schema";
 import { peopleNames } from "../platform/accounts/peopleNames";
 import { defineQuery } from "../platform/operation";

@@ -8,7 +8,7 @@ export interface NoticeOf {
   readonly payload: Readonly<Record<string, string | number>>;
 }
 
-/** Puts a line into the inbox of each person, the actor left out, in the command's own transaction. */
+/** Puts a line into the inbox of each person, in the command's own transaction; the actor and those who muted the deal are left out. */
 export async function notify(
   { tx, actor, now, emit }: CommandContext,
   userIds: readonly string[],
@@ -20,9 +20,15 @@ export async function notify(
     where: { workspaceId, userId: { in: others } },
     select: { userId: true },
   });
-  if (members.length === 0) return;
+  const muted =
+    dealId === null
+      ? []
+      : await tx.follow.findMany({ where: { dealId, state: "muted" }, select: { userId: true } });
+  const quiet = new Set(muted.map(({ userId }) => userId));
+  const told = members.map(({ userId }) => userId).filter((userId) => !quiet.has(userId));
+  if (told.length === 0) return;
   await tx.notice.createMany({
-    data: members.map(({ userId }) => ({
+    data: told.map((userId) => ({
       workspaceId,
       userId,
       dealId,
@@ -32,6 +38,22 @@ export async function notify(
       at: now,
     })),
   });
-  const told = members.map(({ userId }) => userId);
   await emit({ workspaceId, kind: "notice.new", payload: { for: told } });
+}
+
+/** Tells those who follow a deal that it changed. */
+export async function notifyFollowers(
+  context: CommandContext,
+  notice: NoticeOf & { readonly dealId: string },
+): Promise<void> {
+  const { dealId } = notice;
+  const followers = await context.tx.follow.findMany({
+    where: { dealId, state: "following" },
+    select: { userId: true },
+  });
+  await notify(
+    context,
+    followers.map(({ userId }) => userId),
+    notice,
+  );
 }

@@ -1,5 +1,5 @@
-import { dealIn } from "../deals/commands";
 import { currentHash } from "../deals/current";
+import { dealIn } from "../deals/find";
 import { dealInput } from "../deals/schema";
 import { peopleNames } from "../platform/accounts/peopleNames";
 import { notFound } from "../platform/errors";

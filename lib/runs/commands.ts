@@ -1,8 +1,9 @@
 import { randomUUID } from "node:crypto";
 import { priceOnServer } from "../compute/serverPool";
 import { dealPath } from "../deals/check";
-import { dealIn } from "../deals/commands";
+import { dealIn } from "../deals/find";
 import { queries as dealQueries } from "../deals/queries";
+import { notifyFollowers } from "../notices/notify";
 import { Refusal, refuse } from "../platform/errors";
 import { defineCommand } from "../platform/operation";
 import { canonicalJson } from "../pricing/canonical";
@@ -42,10 +43,11 @@ const price = defineCommand({
       milliseconds: answer.milliseconds,
     };
   },
-  async run({ tx, actor, now, member, record, emit }, { workspaceId, dealId, note }, priced) {
+  async run(context, { workspaceId, dealId, note }, priced) {
+    const { tx, actor, now, member, record, emit } = context;
     const self = await member(workspaceId);
     need(mayWork(self), self.role, "price a run");
-    await dealIn({ tx, actor, now, member }, workspaceId, dealId, true);
+    await dealIn(context, workspaceId, dealId, true);
     const last = await tx.run.findFirst({
       where: { dealId },
       orderBy: { number: "desc" },
@@ -86,6 +88,8 @@ const price = defineCommand({
       after: { number, requestHash: report.requestHash, note },
     });
     await emit({ workspaceId, dealId, kind: "run.priced", payload: { dealId, runId: id, number } });
+    const told = { runId: id, run: number, words: note };
+    await notifyFollowers(context, { workspaceId, dealId, kind: "deal.changed", payload: told });
     return { runId: id, number };
   },
 });

@@ -264,6 +264,22 @@ const rows: Record<string, Row> = {
     input: ({ workspaceId }) => ({ workspaceId, threadId: "none", resolved: true }),
   },
   "discussion.list": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "discussion.seen": {
+    expected: everyone,
+    input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, threadIds: [] }),
+  },
+  "notices.read": {
+    expected: everyone,
+    input: ({ workspaceId }) => ({ workspaceId, which: "all", isRead: true }),
+  },
+  "notices.follow": {
+    expected: everyone,
+    input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, state: "following" }),
+  },
+  "notices.setMail": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId, mail: "off" }) },
+  "notices.list": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
+  "notices.count": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
+  "notices.followed": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
   "activity.list": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
 };
 

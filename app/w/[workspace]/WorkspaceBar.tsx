@@ -14,11 +14,13 @@ export function WorkspaceBar({
   name,
   role,
   person,
+  unread,
 }: {
   workspaceId: string;
   name: string;
   role: string;
   person: string;
+  unread: number;
 }) {
   const path = usePathname();
   const router = useRouter();
@@ -51,6 +53,13 @@ export function WorkspaceBar({
           ))}
         </Group>
         <Group gap="sm">
+          <Link
+            href={`/w/${workspaceId}/inbox`}
+            className={classes.room}
+            aria-current={path.startsWith(`/w/${workspaceId}/inbox`) ? "page" : undefined}
+          >
+            Inbox{unread > 0 ? ` (${unread})` : ""}
+          </Link>
           <Text size="sm" component={Link} href={`/account?back=${encodeURIComponent(path)}`}>
             {person}, {role}
           </Text>

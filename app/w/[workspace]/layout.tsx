@@ -1,6 +1,7 @@
 import { Container, Text } from "@mantine/core";
 import type { ReactNode } from "react";
 import { ask } from "@/app/_ui/ask";
+import { queries as notices } from "@/lib/notices/queries";
 import { queries } from "@/lib/workspaces/queries";
 import { Live } from "./_live/Live";
 import { WorkspaceBar } from "./WorkspaceBar";
@@ -15,9 +16,10 @@ export default async function WorkspaceLayout({
 }) {
   const { workspace } = await params;
   const { name, role, actor } = await ask(queries.open, { workspaceId: workspace });
+  const { unread } = await ask(notices.count, { workspaceId: workspace });
   return (
     <>
-      <WorkspaceBar workspaceId={workspace} name={name} role={role} person={actor.name} />
+      <WorkspaceBar workspaceId={workspace} name={name} role={role} person={actor.name} unread={unread} />
       <Container fluid maw={1760} py="md" component="main">
         <Live workspaceId={workspace}>{children}</Live>
         <Text component="footer" size="xs" c="dimmed" mt="xl">

@@ -2,11 +2,31 @@
 
 import { NativeSelect } from "@mantine/core";
 import { useMemo } from "react";
+import { Figure } from "@/app/_ui/Figure";
 import { FigureTable } from "@/app/_ui/table/FigureTable";
 import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import { useKept } from "@/app/_ui/useKept";
 import type { PricingReport, TrancheReport } from "@/lib/pricing/report";
+import { Pointable } from "../_talk/Pointing";
 import { hiddenTrancheColumns, type LossesIn, lossesIn, trancheColumns } from "./trancheColumns";
+
+/** Columns that are figures of the report as they stand in it, so that a thread can be pinned to them. */
+const PINNED = new Set([
+  "expectedLoss",
+  "hitProbability",
+  "exhaustionProbability",
+  "parSpread",
+  "upfrontAtRunning",
+  "sellerValue",
+  "annuity",
+  "leverage",
+  "defaultsToAttach",
+  "defaultsToExhaust",
+  "lossGivenHit",
+  "standardDeviation",
+  "protectionLeg",
+  "notional",
+]);
 
 /** Every class of a run with its figures. */
 export function ReportClasses({
@@ -49,6 +69,19 @@ export function ReportClasses({
       keyOf={({ id }) => id}
       hiddenAtFirst={hiddenTrancheColumns}
       minWidth={1000}
+      cellOf={(column, row) => {
+        const value = column.value(row);
+        if (column.unit === "text" || typeof value !== "number" || measure !== "class") return undefined;
+        if (!PINNED.has(column.key)) return undefined;
+        return (
+          <Pointable
+            path={`tranches/${row.id}/${column.key}`}
+            label={`${column.header} of ${nameOf(row.id)}`}
+          >
+            <Figure value={value} unit={column.unit} />
+          </Pointable>
+        );
+      }}
       tools={
         <NativeSelect
           size="xs"

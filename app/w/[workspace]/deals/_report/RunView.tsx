@@ -13,6 +13,7 @@ import type { PricingReport, TrancheReport } from "@/lib/pricing/report";
 import { roomAddress } from "../_frame/rooms";
 import { Hull } from "../_structure/hull/Hull";
 import { waterLine } from "../_structure/hull/law";
+import { Pointable } from "../_talk/Pointing";
 import { ReportClasses } from "./ReportClasses";
 
 const TimelineChart = dynamic(() => import("./TimelineChart").then((module) => module.TimelineChart), {
@@ -37,13 +38,13 @@ export function RunView({
 }) {
   const { report, request } = run;
   const nameOf = (id: string) => classNames[id] ?? id;
-  const pool: [string, number | null, FigureUnit, string][] = [
-    ["Expected loss", report.pool.expectedLoss, "percent", "% of notional"],
-    ["Defaults expected", report.pool.defaultsExpected, "plain", "names"],
-    ["Par spread", report.pool.parSpread, "basisPoints", "bp"],
-    ["Annuity", report.pool.annuity, "years", "years"],
-    ["Realised loss", report.pool.realisedLoss, "percent", "% of notional"],
-    ["Loss unit", report.pool.unit, "percent", "% of notional"],
+  const pool: [string, number | null, FigureUnit, string, string][] = [
+    ["Expected loss", report.pool.expectedLoss, "percent", "% of notional", "expectedLoss"],
+    ["Defaults expected", report.pool.defaultsExpected, "plain", "names", "defaultsExpected"],
+    ["Par spread", report.pool.parSpread, "basisPoints", "bp", "parSpread"],
+    ["Annuity", report.pool.annuity, "years", "years", "annuity"],
+    ["Realised loss", report.pool.realisedLoss, "percent", "% of notional", "realisedLoss"],
+    ["Loss unit", report.pool.unit, "percent", "% of notional", "unit"],
   ];
   return (
     <Stack gap="lg">
@@ -79,13 +80,15 @@ export function RunView({
         </Group>
       </Group>
       <SimpleGrid cols={{ base: 2, sm: 3, md: 6 }}>
-        {pool.map(([label, value, unit, words]) => (
+        {pool.map(([label, value, unit, words, key]) => (
           <div key={label}>
             <Text size="xs" c="dimmed">
               {label} ({words})
             </Text>
             <Text fw={600}>
-              <Figure value={value} unit={unit} />
+              <Pointable path={`pool.${key}`} label={`${label} of the pool`}>
+                <Figure value={value} unit={unit} />
+              </Pointable>
             </Text>
           </div>
         ))}
