@@ -1,6 +1,7 @@
 /** The rooms of a deal's desk, in the order of their tabs. `slug` is the room's part of the address. */
 export const rooms = [
   { slug: "", label: "Structure" },
+  { slug: "pool", label: "Pool" },
   { slug: "correlation", label: "Correlation" },
   { slug: "drivers", label: "Drivers" },
   { slug: "stress", label: "Stress" },

@@ -1,16 +1,27 @@
 "use client";
 
-import { type KeyboardEvent, memo, useState } from "react";
+import { type KeyboardEvent, memo, useRef, useState } from "react";
 import { fourDigits } from "@/app/_ui/figures";
 import type { DraftRow, TypedCell } from "@/lib/pools/draft";
 import { cellText, type GridColumn, valueIn } from "@/lib/pools/grid";
 import { textFields } from "@/lib/pools/import/columns";
 import styles from "./grid.module.css";
+import type { Place } from "./gridKeys";
 
 /** What a grid tells when cells are typed in or rows taken away; absent where the reader may not edit. */
 export interface GridEdits {
   type(cells: readonly TypedCell[]): void;
   remove(row: DraftRow): void;
+  undo(): void;
+  redo(): void;
+}
+
+/** What a cell tells the grid of keys and clipboard; true when the grid has dealt with it. */
+export interface CellEvents {
+  focus(place: Place): void;
+  key(event: KeyboardEvent<HTMLInputElement>, place: Place, isEditing: boolean): boolean;
+  paste(place: Place, text: string): boolean;
+  copied(place: Place): string | null;
 }
 
 /** One name of the grid. Cells show four digits, all of them on hover and while typing. */
@@ -19,14 +30,18 @@ export const GridRow = memo(function GridRow({
   index,
   columns,
   edits,
-  onPaste,
+  selected,
+  events,
 }: {
   row: DraftRow;
   index: number;
   columns: readonly GridColumn[];
   edits: GridEdits | null;
-  onPaste: (index: number, position: number, text: string) => boolean;
+  /** Columns of this row in the selected block, first and last; null when it has none. */
+  selected: string | null;
+  events: CellEvents;
 }) {
+  const [first, last] = selected?.split(":").map(Number) ?? [];
   const reasons = new Map(row.problems.map(({ position, reason }) => [position, reason]));
   return (
     <tr aria-rowindex={index + 2}>
@@ -35,10 +50,11 @@ export const GridRow = memo(function GridRow({
           key={column.key}
           row={row}
           column={column}
-          place={`${index}:${position}`}
+          place={{ row: index, column: position }}
+          isSelected={first !== undefined && last !== undefined && position >= first && position <= last}
           reason={reasons.get(position) ?? null}
           edits={edits}
-          onPaste={(text) => onPaste(index, position, text)}
+          events={events}
         />
       ))}
       {edits && (
@@ -61,18 +77,22 @@ function GridCell({
   row,
   column,
   place,
+  isSelected,
   reason,
   edits,
-  onPaste,
+  events,
 }: {
   row: DraftRow;
   column: GridColumn;
-  place: string;
+  place: Place;
+  isSelected: boolean;
   reason: string | null;
   edits: GridEdits | null;
-  onPaste: (text: string) => boolean;
+  events: CellEvents;
 }) {
   const [isTyping, setTyping] = useState(false);
+  const [isEditing, setEditing] = useState(false);
+  const before = useRef("");
   const isText = textFields.includes(column.field);
   const source = row.name ?? row.saved;
   const typed = row.typed[column.key];
@@ -94,20 +114,52 @@ function GridCell({
       data-number={!isText || undefined}
       data-changed={typed !== undefined || undefined}
       data-wrong={reason !== null || undefined}
+      data-selected={isSelected || undefined}
       title={reason ? `${full || "Empty"}: ${reason}` : full}
     >
       <input
         aria-label={label}
         aria-invalid={reason !== null}
-        data-place={place}
+        data-place={`${place.row}:${place.column}`}
         inputMode={isText ? "text" : "decimal"}
         value={isTyping ? (typed ?? full) : short}
-        onFocus={() => setTyping(true)}
-        onBlur={() => setTyping(false)}
-        onChange={(event) => edits.type([{ row, column, text: event.currentTarget.value }])}
-        onKeyDown={moveByKey}
+        onFocus={(event) => {
+          setTyping(true);
+          before.current = typed ?? full;
+          events.focus(place);
+          const input = event.currentTarget;
+          requestAnimationFrame(() => input.select());
+        }}
+        onBlur={() => {
+          setTyping(false);
+          setEditing(false);
+        }}
+        onDoubleClick={() => setEditing(true)}
+        onChange={(event) => {
+          setEditing(true);
+          edits.type([{ row, column, text: event.currentTarget.value }]);
+        }}
+        onKeyDown={(event) => {
+          if (event.key === "F2") {
+            const end = event.currentTarget.value.length;
+            event.currentTarget.setSelectionRange(end, end);
+            setEditing(true);
+          } else if (event.key === "Escape" && isEditing) {
+            edits.type([{ row, column, text: before.current }]);
+            setEditing(false);
+            const input = event.currentTarget;
+            requestAnimationFrame(() => input.select());
+          } else if (!events.key(event, place, isEditing)) return;
+          event.preventDefault();
+        }}
         onPaste={(event) => {
-          if (onPaste(event.clipboardData.getData("text/plain"))) event.preventDefault();
+          if (events.paste(place, event.clipboardData.getData("text/plain"))) event.preventDefault();
+        }}
+        onCopy={(event) => {
+          const text = isEditing ? null : events.copied(place);
+          if (text === null) return;
+          event.clipboardData.setData("text/plain", text);
+          event.preventDefault();
         }}
       />
     </td>
@@ -119,14 +171,4 @@ function shortText(value: number, { unit, field }: GridColumn): string {
     value,
     field === "notional" ? "money" : unit === "percent" || unit === "basisPoints" ? unit : "plain",
   );
-}
-
-/** Up, down and Enter go to the same column of the row above or below. */
-function moveByKey(event: KeyboardEvent<HTMLInputElement>): void {
-  const step = { ArrowUp: -1, ArrowDown: 1, Enter: 1 }[event.key];
-  if (step === undefined) return;
-  event.preventDefault();
-  const [row, column] = (event.currentTarget.dataset.place ?? "").split(":");
-  const grid = event.currentTarget.closest("table");
-  grid?.querySelector<HTMLInputElement>(`input[data-place="${Number(row) + step}:${column}"]`)?.focus();
 }

@@ -20,6 +20,7 @@ import { type GridColumn, valueIn } from "@/lib/pools/grid";
 import { textFields } from "@/lib/pools/import/columns";
 import { type GridEdits, GridRow } from "./GridRow";
 import styles from "./grid.module.css";
+import { useGridKeys } from "./useGridKeys";
 
 const features = tableFeatures({
   columnFilteringFeature,
@@ -68,23 +69,14 @@ export function NamesGrid({
   const above = items[0]?.start ?? 0;
   const below = virtual.getTotalSize() - (items.at(-1)?.end ?? 0);
 
-  /** Lays a block of spreadsheet cells from a cell on to the right and down; a single cell is left to the field itself. */
-  const paste = (index: number, position: number, text: string): boolean => {
-    const block = text
-      .replace(/\r?\n$/, "")
-      .split(/\r?\n/)
-      .map((line) => line.split("\t"));
-    if (!edits || (block.length === 1 && block[0]?.length === 1)) return false;
-    edits.type(
-      block.flatMap((cells, i) =>
-        cells.flatMap((cell, k) => {
-          const [row, column] = [shown[index + i]?.original, columns[position + k]];
-          return row && column ? [{ row, column, text: cell.trim() }] : [];
-        }),
-      ),
-    );
-    return true;
-  };
+  const scrollTo = (row: number) => virtual.scrollToIndex(row);
+  const { block, events } = useGridKeys({
+    rows: shown.map(({ original }) => original),
+    columns,
+    edits,
+    scroller,
+    scrollTo,
+  });
 
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reachable by keyboard
@@ -122,7 +114,10 @@ export function NamesGrid({
                 index={index}
                 columns={columns}
                 edits={edits}
-                onPaste={paste}
+                selected={
+                  block && index >= block.top && index <= block.bottom ? `${block.left}:${block.right}` : null
+                }
+                events={events}
               />
             );
           })}
