@@ -20,13 +20,21 @@ const mine = defineQuery({
   },
 });
 
+/** The parts of a page are read one by one: events of so many milliseconds before are told to it again. */
+const RENDERED_WITHIN = 5_000;
+
 const open = defineQuery({
   name: "workspaces.open",
   input: inWorkspace,
-  async run({ tx, actor, member }, { workspaceId }) {
+  async run({ tx, actor, member, now }, { workspaceId }) {
     const { role } = await member(workspaceId);
     const workspace = await tx.workspace.findUniqueOrThrow({ where: { id: workspaceId } });
-    return { id: workspace.id, name: workspace.name, role, actor, may: mayOf({ role }) };
+    const { _max } = await tx.event.aggregate({
+      where: { workspaceId, at: { lt: new Date(now.getTime() - RENDERED_WITHIN) } },
+      _max: { id: true },
+    });
+    const since = String(_max.id ?? 0);
+    return { id: workspace.id, name: workspace.name, role, actor, may: mayOf({ role }), since };
   },
 });
 

@@ -10,8 +10,8 @@ import { openEmbedded, openServer, type Store } from "@/lib/platform/db/open";
  * A migrated database of the test file's own: on the server in TEST_DATABASE_URL where that is set, else embedded in a
  * temporary folder. Call at the top of a file; the store is there once tests run, and gone after them.
  */
-export function withDatabase(): { readonly store: Store } {
-  let opened: { store: Store; drop: () => Promise<void> } | undefined;
+export function withDatabase(): { readonly store: Store; another(): Promise<Store> } {
+  let opened: { store: Store; another?: () => Promise<Store>; drop: () => Promise<void> } | undefined;
   beforeAll(async () => {
     const server = process.env.TEST_DATABASE_URL;
     opened = await (server ? onServer(server) : embedded());
@@ -21,6 +21,10 @@ export function withDatabase(): { readonly store: Store } {
     get store() {
       if (!opened) throw new Error("The database is open only while tests run.");
       return opened.store;
+    },
+    /** The store as a second process would have it; the same one where only one process may open it. */
+    async another() {
+      return (await opened?.another?.()) ?? this.store;
     },
   };
 }
@@ -41,11 +45,17 @@ async function onServer(server: string) {
   const url = new URL(server);
   url.pathname = `/${name}`;
   const store = await openServer(url.href);
+  const others: Store[] = [];
+  const another = async () => {
+    const other = await openServer(url.href);
+    others.push(other);
+    return other;
+  };
   const drop = async () => {
-    await store.close();
+    await Promise.all([store, ...others].map((each) => each.close()));
     await administer(server, `DROP DATABASE ${name} WITH (FORCE)`);
   };
-  return { store, drop };
+  return { store, another, drop };
 }
 
 async function administer(server: string, sql: string): Promise<void> {

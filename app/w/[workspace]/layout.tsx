@@ -15,13 +15,15 @@ export default async function WorkspaceLayout({
   params: Promise<{ workspace: string }>;
 }) {
   const { workspace } = await params;
-  const { name, role, actor } = await ask(queries.open, { workspaceId: workspace });
+  const { name, role, actor, since } = await ask(queries.open, { workspaceId: workspace });
   const { unread } = await ask(notices.count, { workspaceId: workspace });
   return (
     <>
       <WorkspaceBar workspaceId={workspace} name={name} role={role} person={actor.name} unread={unread} />
       <Container fluid maw={1760} py="md" component="main">
-        <Live workspaceId={workspace}>{children}</Live>
+        <Live workspaceId={workspace} userId={actor.userId} since={since}>
+          {children}
+        </Live>
         <Text component="footer" size="xs" c="dimmed" mt="xl">
           Figures come from a model whose copula has no dynamics and which the market has broken before. They
           are an aid to judgement, not advice or a price anyone must honour; use is subject to the firm's own

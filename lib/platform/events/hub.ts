@@ -1,5 +1,5 @@
 import type { Store } from "../db/open";
-import { store } from "../db/store";
+import { logError } from "../log";
 import { CHANNEL } from "./channel";
 
 /** What a stream is told; ids rise within a workspace. */
@@ -10,43 +10,52 @@ export interface LiveEvent {
   readonly payload: unknown;
 }
 
-type Subscriber = (event: LiveEvent) => void;
+interface Subscriber {
+  /** The last event that it was given, or need not be given. */
+  reached: bigint;
+  readonly tell: (event: LiveEvent) => void;
+}
 
-/** One listener a process, any number of streams: events are read once a workspace and handed out. */
-class EventHub {
+const AT_ONCE = 500;
+const AGAIN_AFTER = 1_000;
+
+/** One listener a process, any number of streams: events are read once a workspace and handed out in their order. */
+export class EventHub {
   private readonly subscribers = new Map<string, Set<Subscriber>>();
-  private readonly lastSeen = new Map<string, bigint>();
-  private readonly reading = new Map<string, Promise<void>>();
+  private readonly underWay = new Map<string, "reading" | "readAgain">();
+  private unlisten: () => Promise<void> = async () => {};
 
-  constructor(private readonly opened: Store) {}
+  private constructor(private readonly opened: Store) {}
 
-  async start(): Promise<void> {
-    await this.opened.listen(CHANNEL, (payload) => this.heard(payload.split(" ")[0] ?? ""));
+  /** Listens on a store. */
+  static async on(opened: Store): Promise<EventHub> {
+    const hub = new EventHub(opened);
+    hub.unlisten = await opened.listen(CHANNEL, (payload) => hub.heard(payload.split(" ")[0] ?? ""));
+    return hub;
   }
 
   /** Streams a workspace's events from after `since` (or from now); resolves with the way to stop. */
-  async subscribe(workspaceId: string, since: bigint | null, subscriber: Subscriber): Promise<() => void> {
-    const from = since ?? (await this.newest(workspaceId));
-    let reached = from;
-    const ordered: Subscriber = (event) => {
-      const id = BigInt(event.id);
-      if (id <= reached) return;
-      reached = id;
-      subscriber(event);
-    };
+  async subscribe(
+    workspaceId: string,
+    since: bigint | null,
+    tell: (event: LiveEvent) => void,
+  ): Promise<() => void> {
+    const subscriber: Subscriber = { reached: since ?? (await this.newest(workspaceId)), tell };
     const known = this.subscribers.get(workspaceId) ?? new Set();
-    known.add(ordered);
+    known.add(subscriber);
     this.subscribers.set(workspaceId, known);
-    const seen = this.lastSeen.get(workspaceId);
-    if (seen === undefined || from < seen) this.lastSeen.set(workspaceId, from);
     this.heard(workspaceId);
     return () => {
-      known.delete(ordered);
-      if (known.size === 0) {
+      known.delete(subscriber);
+      if (known.size === 0 && this.subscribers.get(workspaceId) === known)
         this.subscribers.delete(workspaceId);
-        this.lastSeen.delete(workspaceId);
-      }
     };
+  }
+
+  /** Hears nothing any more. */
+  async stop(): Promise<void> {
+    this.subscribers.clear();
+    await this.unlisten();
   }
 
   private async newest(workspaceId: string): Promise<bigint> {
@@ -62,38 +71,44 @@ class EventHub {
     const workspaces = workspaceId === "" ? [...this.subscribers.keys()] : [workspaceId];
     for (const each of workspaces) {
       if (!this.subscribers.has(each)) continue;
-      const queued = (this.reading.get(each) ?? Promise.resolve())
-        .then(() => this.read(each))
-        .catch(() => undefined);
-      this.reading.set(each, queued);
+      if (this.underWay.has(each)) this.underWay.set(each, "readAgain");
+      else void this.readAll(each);
     }
   }
 
-  private async read(workspaceId: string): Promise<void> {
-    const after = this.lastSeen.get(workspaceId);
-    if (after === undefined) return;
+  /** Reads until nothing more was heard of; a failed reading is tried again, for its events were announced only once. */
+  private async readAll(workspaceId: string): Promise<void> {
+    do {
+      this.underWay.set(workspaceId, "reading");
+      try {
+        while ((await this.read(workspaceId)) === AT_ONCE);
+      } catch (error) {
+        logError("events", error);
+        setTimeout(() => this.heard(workspaceId), AGAIN_AFTER).unref();
+      }
+    } while (this.underWay.get(workspaceId) === "readAgain");
+    this.underWay.delete(workspaceId);
+  }
+
+  /** One reading serves those who are there when it starts; who comes meanwhile with an older number has the next one. */
+  private async read(workspaceId: string): Promise<number> {
+    const readers = [...(this.subscribers.get(workspaceId) ?? [])];
+    const [first, ...others] = readers;
+    if (!first) return 0;
+    const after = others.reduce((least, { reached }) => (reached < least ? reached : least), first.reached);
     const rows = await this.opened.database.event.findMany({
       where: { workspaceId, id: { gt: after } },
       orderBy: { id: "asc" },
-      take: 500,
+      take: AT_ONCE,
     });
-    for (const row of rows) {
-      const event = { id: String(row.id), dealId: row.dealId, kind: row.kind, payload: row.payload };
-      for (const subscriber of this.subscribers.get(workspaceId) ?? []) subscriber(event);
-      if (this.lastSeen.has(workspaceId)) this.lastSeen.set(workspaceId, row.id);
+    for (const { id, dealId, kind, payload } of rows) {
+      const event = { id: String(id), dealId, kind, payload };
+      for (const reader of readers) {
+        if (id <= reader.reached) continue;
+        reader.reached = id;
+        reader.tell(event);
+      }
     }
-    if (rows.length === 500) await this.read(workspaceId);
+    return rows.length;
   }
-}
-
-const shared = globalThis as typeof globalThis & { loadlineHub?: Promise<EventHub> | undefined };
-
-/** The process's hub, started on first use. */
-export function eventHub(): Promise<Pick<EventHub, "subscribe">> {
-  shared.loadlineHub ??= store().then(async (opened) => {
-    const hub = new EventHub(opened);
-    await hub.start();
-    return hub;
-  });
-  return shared.loadlineHub;
 }

@@ -1,6 +1,6 @@
 import { currentActor } from "@/lib/platform/accounts/auth";
 import { Refusal } from "@/lib/platform/errors";
-import { mustBeMember } from "@/lib/platform/events/liveStream";
+import { mustBeMember } from "@/lib/platform/events/live";
 
 export const dynamic = "force-dynamic";
 

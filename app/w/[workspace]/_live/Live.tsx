@@ -2,35 +2,39 @@
 
 import { Alert } from "@mantine/core";
 import { usePathname, useRouter } from "next/navigation";
-import { createContext, type ReactNode, useCallback, useContext, useEffect, useRef, useState } from "react";
+import { type ReactNode, useCallback, useEffect, useMemo, useRef, useState } from "react";
 import { SIGNED_OUT } from "@/app/_ui/call";
 import { makePageFetchesPatient } from "@/app/_ui/patientFetch";
-import { keepConnected, type LiveEvent, type LiveState } from "./connection";
+import { concerns } from "./concerns";
+import { type Connection, keepConnected, type LiveEvent, type LiveState, type LookingAt } from "./connection";
+import { LiveContext } from "./liveContext";
 import { SignInAgain } from "./SignInAgain";
 
 /** Events that come in a burst refresh the page once. */
 const BURST = 120;
 
-type Listener = (event: LiveEvent) => void;
-
-const LiveContext = createContext<((listener: Listener) => () => void) | null>(null);
-
-/** Tells a component of the workspace's events while it is on screen. */
-export function useLiveEvents(listener: Listener): void {
-  const subscribe = useContext(LiveContext);
-  const latest = useRef(listener);
-  latest.current = listener;
-  useEffect(() => subscribe?.((event) => latest.current(event)), [subscribe]);
-}
-
 /** Keeps every page of a workspace as the server has it, and says when it cannot. */
-export function Live({ workspaceId, children }: { workspaceId: string; children: ReactNode }) {
+export function Live({
+  workspaceId,
+  userId,
+  since,
+  children,
+}: {
+  workspaceId: string;
+  userId: string;
+  /** An event that the page, as it came from the server, has certainly seen. */
+  since: string;
+  children: ReactNode;
+}) {
   const router = useRouter();
   const path = usePathname();
   const [state, setState] = useState<LiveState>("open");
-  const listeners = useRef(new Set<Listener>());
+  const [lookingAt, setLookingAt] = useState<LookingAt>({});
+  const listeners = useRef(new Set<(event: LiveEvent) => void>());
+  const connection = useRef<Connection | null>(null);
   const place = useRef(path);
   place.current = path;
+  const first = useRef(since);
   const refresh = useRef(router.refresh);
   refresh.current = router.refresh;
 
@@ -44,35 +48,38 @@ export function Live({ workspaceId, children }: { workspaceId: string; children:
         refresh.current();
       }, BURST);
     };
-    const end = keepConnected(
-      workspaceId,
-      (event) => {
+    const opened = keepConnected(workspaceId, dealOf(place.current), first.current, {
+      event(event) {
         for (const listener of listeners.current) listener(event);
         if (concerns(event, place.current)) soon();
       },
-      (next) => {
+      presence: setLookingAt,
+      state(next) {
         if (next === "open" && was !== "open") soon();
         was = next;
         setState(next);
       },
-    );
+    });
+    connection.current = opened;
     const signedOut = () => setState("signedOut");
     window.addEventListener(SIGNED_OUT, signedOut);
     return () => {
       window.removeEventListener(SIGNED_OUT, signedOut);
-      end();
+      opened.end();
       if (timer) clearTimeout(timer);
     };
   }, [workspaceId]);
+  useEffect(() => connection.current?.show(dealOf(path)), [path]);
 
-  const subscribe = useCallback((listener: Listener) => {
+  const subscribe = useCallback((listener: (event: LiveEvent) => void) => {
     listeners.current.add(listener);
     return () => {
       listeners.current.delete(listener);
     };
   }, []);
+  const atHand = useMemo(() => ({ subscribe, lookingAt, userId }), [subscribe, lookingAt, userId]);
   return (
-    <LiveContext.Provider value={subscribe}>
+    <LiveContext.Provider value={atHand}>
       {state === "lost" && (
         <Alert color="yellow" role="status" mb="sm">
           The connection to the server is lost. The page catches up by itself when it is back; what you type
@@ -90,9 +97,7 @@ export function Live({ workspaceId, children }: { workspaceId: string; children:
   );
 }
 
-/** A page of one deal is not refreshed for what happens in another. */
-function concerns({ dealId, kind }: LiveEvent, path: string): boolean {
-  if (kind.startsWith("job.")) return false;
-  const [, open] = /\/deals\/([^/]+)/.exec(path) ?? [];
-  return dealId === null || open === undefined || open === "new" || dealId === open;
+function dealOf(path: string): string | null {
+  const [, deal] = /\/deals\/([^/]+)/.exec(path) ?? [];
+  return deal === undefined || deal === "new" ? null : deal;
 }

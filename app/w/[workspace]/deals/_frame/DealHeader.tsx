@@ -7,6 +7,7 @@ import { Behind } from "./Behind";
 import { DealActions } from "./DealActions";
 import { useDeal } from "./dealContext";
 import styles from "./frame.module.css";
+import { OthersHere } from "./OthersHere";
 import { RoomTabs } from "./RoomTabs";
 
 const standingWords: Record<Exclude<Standing, "none">, string> = {
@@ -48,6 +49,7 @@ export function DealHeader({ standing = "none" }: { standing?: Standing }) {
           </div>
           <DealActions />
         </Group>
+        <OthersHere dealId={deal?.id} />
         {deal && <RoomTabs workspaceId={workspaceId} dealId={deal.id} />}
       </div>
       {(isBehind || refused.length > 0) && (

@@ -3,7 +3,7 @@
 import { useCallback, useEffect, useRef, useState } from "react";
 import { call } from "@/app/_ui/call";
 import type { Operations } from "@/lib/operations";
-import { useLiveEvents } from "../../_live/Live";
+import { useLiveEvents } from "../../_live/liveContext";
 import type { Work } from "./text";
 
 export type OpenJob = Operations["jobs.open"]["output"];
