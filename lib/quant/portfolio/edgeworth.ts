@@ -20,6 +20,10 @@ export interface AboveStrike {
   readonly leftOut: number;
 }
 
+/** Beyond this many deviations nothing is left that a weight could show. */
+const FAR = 12;
+const NOTHING: AboveStrike = { probability: 0, excess: 0, square: 0, density: 0, leftOut: 0 };
+
 /**
  * A sum near the normal law above a strike, by Edgeworth's expansion to the fourth cumulant (Kolassa, Series Approximation
  * Methods in Statistics, 2006, ch. 3), integrated once and twice: ∫ φ Heₙ = −φ Heₙ₋₁.
@@ -30,6 +34,7 @@ export function aboveStrike({ mean, deviation, skewness, kurtosis }: SumShape, s
     return { probability: mean > strike ? 1 : 0, excess, square: excess * excess, density: 0, leftOut: 0 };
   }
   const z = (strike - mean) / deviation;
+  if (z > FAR) return NOTHING;
   const density = normalDensity(z);
   const tail = normalCdf(-z);
   const square = z * z;

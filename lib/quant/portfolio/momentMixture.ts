@@ -26,7 +26,7 @@ interface MomentPanel extends JudgedPanel {
 }
 
 const PROBE = legendreProbe(PANEL_POINTS);
-const ACCURACY = { absolute: 1e-9, relative: 1e-6 };
+const ACCURACY = { absolute: 1e-8, relative: 1e-5 };
 /** A conditional deviation below this is rounding: the sum is settled. */
 const SETTLED = 1e-9;
 
@@ -39,18 +39,22 @@ export function momentLaw(amounts: Float64Array, names: FactorNames, strikes: re
   const mean = amounts.reduce((sum, amount, i) => sum + amount * normalCdf(names.thresholds[i]!), 0);
   const cumulants = new CumulantPanels(amounts, names, mean);
   const shapes = mixedShapes(cumulants, strikes);
-  const above = (strike: number) => shapes.map((shape) => weighted(aboveStrike(shape, strike), shape.weight));
-  const sumOf = (strike: number, part: keyof AboveStrike) =>
-    above(strike).reduce((sum, shape) => sum + shape[part], 0);
+  const sums = new Map<number, AboveStrike>();
+  const above = (strike: number) => {
+    const found = sums.get(strike) ?? mixedAbove(shapes, strike);
+    sums.set(strike, found);
+    return found;
+  };
   const excess = (strike: number) =>
-    strike <= 0 ? mean - strike : Math.max(0, Math.min(mean, sumOf(strike, "excess")));
+    strike <= 0 ? mean - strike : Math.max(0, Math.min(mean, above(strike).excess));
   const probability = (strike: number) =>
-    strike < 0 ? 1 : Math.min(1, Math.max(0, sumOf(strike, "probability")));
+    strike < 0 ? 1 : Math.min(1, Math.max(0, above(strike).probability));
   const step = mean > 0 ? amounts.reduce((sum, amount) => sum + amount, 0) / amounts.length : 0;
-  const errorAt = (strike: number) =>
-    sumOf(strike, "leftOut") + (step * step * sumOf(strike, "density")) / 12;
-  const error = strikes.reduce((worst, strike) => Math.max(worst, errorAt(strike)), 0);
-  const square = (strike: number) => sumOf(strike, "square");
+  const error = strikes.reduce((worst, strike) => {
+    const { density, leftOut } = above(strike);
+    return Math.max(worst, leftOut + (step * step * density) / 12);
+  }, 0);
+  const square = (strike: number) => above(strike).square;
   return {
     questions: {
       between: (attachment, detachment) => Math.max(0, excess(attachment) - excess(detachment)),
@@ -68,14 +72,17 @@ export function momentLaw(amounts: Float64Array, names: FactorNames, strikes: re
   };
 }
 
-function weighted(above: AboveStrike, weight: number): AboveStrike {
-  return {
-    probability: weight * above.probability,
-    excess: weight * above.excess,
-    square: weight * above.square,
-    density: weight * above.density,
-    leftOut: weight * above.leftOut,
-  };
+function mixedAbove(shapes: readonly WeightedShape[], strike: number): AboveStrike {
+  const sum = { probability: 0, excess: 0, square: 0, density: 0, leftOut: 0 };
+  for (const shape of shapes) {
+    const above = aboveStrike(shape, strike);
+    sum.probability += shape.weight * above.probability;
+    sum.excess += shape.weight * above.excess;
+    sum.square += shape.weight * above.square;
+    sum.density += shape.weight * above.density;
+    sum.leftOut += shape.weight * above.leftOut;
+  }
+  return sum;
 }
 
 function mixedShapes(cumulants: CumulantPanels, strikes: readonly number[]): readonly WeightedShape[] {
@@ -110,15 +117,22 @@ function shapeAt(cumulants: CumulantPanels, factor: number, weight: number): Wei
 
 /** Excess and tail at each strike. */
 function judged(shapes: readonly WeightedShape[], strikes: readonly number[]): MomentPanel {
-  const terms = strikes.flatMap((strike) => {
-    const above = shapes.map((shape) => weighted(aboveStrike(shape, strike), shape.weight));
-    return [above.map((shape) => shape.excess), above.map((shape) => shape.probability)];
-  });
-  return {
-    shapes,
-    values: Float64Array.from(terms, (part) => part.reduce((sum, term) => sum + term, 0)),
-    errors: Float64Array.from(terms, (part) => legendreError(Float64Array.from(part), PROBE)),
-  };
+  const values = new Float64Array(2 * strikes.length);
+  const errors = new Float64Array(2 * strikes.length);
+  const excess = new Float64Array(shapes.length);
+  const tail = new Float64Array(shapes.length);
+  for (const [i, strike] of strikes.entries()) {
+    for (const [k, shape] of shapes.entries()) {
+      const above = aboveStrike(shape, strike);
+      excess[k] = shape.weight * above.excess;
+      tail[k] = shape.weight * above.probability;
+    }
+    values[2 * i] = excess.reduce((sum, term) => sum + term, 0);
+    values[2 * i + 1] = tail.reduce((sum, term) => sum + term, 0);
+    errors[2 * i] = legendreError(excess, PROBE);
+    errors[2 * i + 1] = legendreError(tail, PROBE);
+  }
+  return { shapes, values, errors };
 }
 
 /** Smallest amount x with P(X ≤ x) ≥ level, by bisection. */
