@@ -5,6 +5,7 @@ import {
   type NameDriversAnswer,
   nameDrivers,
 } from "../pricing/drivers";
+import { type QuickCache, quickCache } from "../pricing/quickCache";
 import type { PricingRequest } from "../pricing/request";
 import type { Shock } from "../pricing/shock";
 import { type ShockedFigures, shockedFigures } from "../pricing/shockedFigures";
@@ -18,6 +19,8 @@ export const tasks = {
   /** Every class of a request after a shock. */
   shocked: ({ request, shock }: { readonly request: unknown; readonly shock: Shock }): ShockedFigures =>
     shockedFigures(request, shock),
+  /** What a request's figures can be read from while its boundaries and correlation are dragged. */
+  quickCache: (request: unknown): QuickCache | null => quickCache(request),
   /** What moves every class, the market's inputs first, then name by name. */
   marketDrivers: (request: unknown): MarketDriversAnswer => marketDrivers(request),
   nameDrivers: (input: {

@@ -107,7 +107,8 @@ function strikeCorrelations({ request, base }: Valuation, { attachment, detachme
   return { attachment: attachment > 0 ? rho : null, detachment: rho };
 }
 
-function averageNameLoss({ names, portfolio }: Valuation): number {
+/** Mean loss of a name at its default, a fraction of the pool. */
+export function averageNameLoss({ names, portfolio }: Valuation): number {
   let sum = 0;
   for (const name of names) sum += (name.notional / portfolio.notional) * (1 - name.recovery);
   return sum / names.length;

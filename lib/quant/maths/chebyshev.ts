@@ -40,14 +40,16 @@ export function correlationOfAngle(u: number): number {
   return (1 - cosinePi(u)) / 2;
 }
 
-/** u in [0, 1] with sin²(πu/2) = ρ, by bisection to the last bits. */
+/** u in [0, 1] with sin²(πu/2) = ρ, by Newton's method on the sine from the near end. */
 export function angleOfCorrelation(rho: number): number {
-  let low = 0;
-  let high = 1;
-  for (let step = 0; step < 52; step++) {
-    const middle = 0.5 * (low + high);
-    if (correlationOfAngle(middle) < rho) low = middle;
-    else high = middle;
+  if (rho <= 0) return 0;
+  if (rho >= 1) return 1;
+  if (rho > 0.5) return 1 - angleOfCorrelation(1 - rho);
+  const wanted = Math.sqrt(rho);
+  let x = wanted * (1 + rho * (1 / 6 + rho * (3 / 40 + rho * (5 / 112))));
+  for (let step = 0; step < 3; step++) {
+    const here = sine(x);
+    x -= (here - wanted) / Math.sqrt(1 - here * here);
   }
-  return rho <= 0 ? 0 : rho >= 1 ? 1 : 0.5 * (low + high);
+  return (2 * x) / Math.PI;
 }

@@ -103,16 +103,21 @@ export class PoolLaws {
     return strike <= 0 ? 0 : this.minimum("loss", j, { kind: "flat", rho }, strike);
   }
 
-  /** The same for strikes in rising order, from one law. */
-  expectedMinimaOnce(j: number, rho: number, strikes: readonly number[]): Float64Array {
+  /** The same for strikes in rising order, from one law at any dependence; `smooth` as for a whole law. */
+  expectedMinimaOnce(
+    j: number,
+    dependence: Dependence,
+    strikes: readonly number[],
+    smooth = true,
+  ): Float64Array {
     const probes = PROBED_AT.map((part) => strikes[Math.ceil(part * (strikes.length - 1))] ?? 0);
     const asked = {
       strikes: [...new Set(probes)],
-      smooth: true,
+      smooth,
       moments: this.mayTakeMoments,
       minimumOnly: true,
     };
-    return this.make("loss", j, { kind: "flat", rho }, asked).minima(strikes);
+    return this.make("loss", j, dependence, asked).minima(strikes);
   }
 
   private keptLaw(key: string, make: () => Distribution): Distribution {

@@ -7,7 +7,7 @@ import { momentLaw } from "./momentMixture";
 import { oneFactorLaw } from "./oneFactorLaw";
 
 /** Pools of fewer names, and lattices, are always laid on a grid. */
-const FEWEST_FOR_MOMENTS = 400;
+export const FEWEST_FOR_MOMENTS = 400;
 /** Moments serve where their estimated error of E[min(X, K)] is below this at every strike. */
 const MOMENT_ERROR = 1e-7;
 

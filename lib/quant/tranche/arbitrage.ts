@@ -52,7 +52,7 @@ function expectedMinima(laws: PoolLaws, strikes: readonly number[], rhos: readon
   const last = portfolio.times.length - 1;
   const minimaAt = (rho: number, at: readonly number[]) => {
     const live = at.map((strike) => Math.max(0, strike - portfolio.realisedLoss));
-    return laws.expectedMinimaOnce(last, rho, live);
+    return laws.expectedMinimaOnce(last, { kind: "flat", rho }, live);
   };
   const highest = rhos[rhos.length - 1]!;
   const steady = rhos.findLastIndex((rho) => rho !== highest) + 1;

@@ -3,7 +3,10 @@
 import { Alert, Grid, Text, Textarea, TextInput } from "@mantine/core";
 import { Problems } from "@/app/_ui/Problems";
 import { usePriced } from "@/app/_ui/usePriced";
+import { useQuickFigures } from "@/app/_ui/useQuickFigures";
 import { dealPath } from "@/lib/deals/check";
+import type { QuickFigures } from "@/lib/pricing/quickFigures";
+import type { TrancheReport } from "@/lib/pricing/report";
 import { useDeal } from "../_frame/dealContext";
 import { ClassTable } from "./ClassTable";
 import { HullRoom } from "./HullRoom";
@@ -14,7 +17,10 @@ import { Terms } from "./Terms";
 export function Structure() {
   const { form, change, mayEdit, problems, refused, problemAt, request, parts, isDirty } = useDeal();
   const priced = usePriced(request);
+  const quick = useQuickFigures(request);
   const { report } = priced;
+  const isBehind = quick !== null && priced.of !== request;
+  const tranches = isBehind ? withQuick(quick, report?.tranches ?? []) : (report?.tranches ?? []);
   const engineProblems = priced.problems.map((problem) => ({ ...problem, path: dealPath(problem.path) }));
   return (
     <>
@@ -39,7 +45,7 @@ export function Structure() {
           )}
         </Grid.Col>
       </Grid>
-      <ClassTable tranches={report?.tranches ?? []} currency={parts?.currency ?? "EUR"} />
+      <ClassTable tranches={tranches} currency={parts?.currency ?? "EUR"} />
       {refused.length === 0 && <Problems title="Before it can be saved" problems={problems} />}
       <Problems title="Why there are no new figures" problems={problems.length > 0 ? [] : engineProblems} />
       <TextInput
@@ -63,6 +69,18 @@ export function Structure() {
       />
     </>
   );
+}
+
+/** Figures that follow a drag where there are any; what needs a whole law waits for the full price. */
+function withQuick(
+  quick: readonly (QuickFigures | null)[],
+  priced: readonly TrancheReport[],
+): readonly TrancheReport[] {
+  const followed = quick.flatMap((figures) =>
+    figures ? [{ ...figures, standardDeviation: null, quantiles: [] }] : [],
+  );
+  const known = new Set(followed.map(({ id }) => id));
+  return [...followed, ...priced.filter(({ id }) => !known.has(id))];
 }
 
 function statusWords(
