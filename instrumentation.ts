@@ -3,4 +3,6 @@ export async function register(): Promise<void> {
   if (process.env.NEXT_RUNTIME !== "nodejs") return;
   const { startJobs } = await import("./lib/jobs/start");
   await startJobs();
+  const { startNoticeMail } = await import("./lib/notices/startMail");
+  await startNoticeMail();
 }

@@ -45,12 +45,15 @@ const follow = defineCommand({
 const setMail = defineCommand({
   name: "notices.setMail",
   input: mailInput,
-  async run({ tx, actor, member }, { workspaceId, mail }) {
+  async run({ tx, actor, now, member }, { workspaceId, mail }) {
     await member(workspaceId);
-    await tx.member.update({
-      where: { workspaceId_userId: { workspaceId, userId: actor.userId } },
-      data: { mail },
-    });
+    const { userId } = actor;
+    const where = { workspaceId_userId: { workspaceId, userId } };
+    const before = await tx.member.findUniqueOrThrow({ where });
+    await tx.member.update({ where, data: { mail } });
+    // What came while mail was off stays in the inbox alone.
+    if (before.mail === "off")
+      await tx.notice.updateMany({ where: { workspaceId, userId, mailedAt: null }, data: { mailedAt: now } });
     return null;
   },
 });

@@ -5,10 +5,10 @@ import Link from "next/link";
 import { useRouter } from "next/navigation";
 import { call } from "@/app/_ui/call";
 import { useAddress } from "@/app/_ui/useAddress";
+import { noticePlace, noticeWords } from "@/lib/notices/words";
 import type { Operations } from "@/lib/operations";
 
 type InboxShown = Operations["notices.list"]["output"];
-type Notice = InboxShown["notices"][number];
 
 /** A person's own inbox: what named them, answered them, asked them, or changed what they follow. */
 export function Inbox({ workspaceId, inbox }: { workspaceId: string; inbox: InboxShown }) {
@@ -75,13 +75,13 @@ export function Inbox({ workspaceId, inbox }: { workspaceId: string; inbox: Inbo
                   <Table.Td>
                     {notice.dealId ? (
                       <Link
-                        href={placeOf(workspaceId, notice.dealId, notice)}
+                        href={noticePlace(workspaceId, notice.dealId, notice)}
                         onClick={() => void mark([notice.id], true)}
                       >
-                        {wordsOf(notice)}
+                        {noticeWords(notice)}
                       </Link>
                     ) : (
-                      wordsOf(notice)
+                      noticeWords(notice)
                     )}
                     {notice.payload.words && (
                       <Text size="xs" c="dimmed" lineClamp={2}>
@@ -106,29 +106,4 @@ export function Inbox({ workspaceId, inbox }: { workspaceId: string; inbox: Inbo
       )}
     </Stack>
   );
-}
-
-function wordsOf({ kind, by, deal, payload }: Notice): string {
-  const place = deal ?? "a deal that is gone";
-  switch (kind) {
-    case "mention":
-      return `${by} named you in ${place}`;
-    case "reply":
-      return `${by} wrote in a thread of yours in ${place}`;
-    case "review.asked":
-      return `${by} asks you to review run ${payload.run} of ${place}`;
-    case "review.answered":
-      return `${by} ${payload.answer === "signed" ? "signed off" : "sent back"} run ${payload.run} of ${place}`;
-    case "deal.changed":
-      return payload.run
-        ? `${by} priced run ${payload.run} of ${place}`
-        : `${by} saved version ${payload.version} of ${place}`;
-  }
-}
-
-function placeOf(workspaceId: string, dealId: string, { kind, payload }: Notice): string {
-  const home = `/w/${workspaceId}/deals/${dealId}`;
-  if (kind === "mention" || kind === "reply") return `${home}/talk?threads=all#comment-${payload.commentId}`;
-  if (kind === "review.asked" || kind === "review.answered") return `${home}/sign-off`;
-  return payload.runId ? `${home}/runs/${payload.runId}` : home;
 }
