@@ -20,10 +20,28 @@ export interface SizingForm {
   readonly step: string;
 }
 
-export const limitFields: readonly { kind: LimitKind; label: string; unit: string; by: number }[] = [
-  { kind: "expectedLoss", label: "Expected loss at most", unit: "% of class", by: 100 },
-  { kind: "hitProbability", label: "Hit probability at most", unit: "%", by: 100 },
-  { kind: "parSpread", label: "Par spread at most", unit: "bp", by: 10_000 },
+export const limitFields: readonly {
+  kind: LimitKind;
+  label: string;
+  noun: string;
+  unit: string;
+  by: number;
+}[] = [
+  {
+    kind: "expectedLoss",
+    label: "Expected loss at most",
+    noun: "expected loss",
+    unit: "% of class",
+    by: 100,
+  },
+  {
+    kind: "hitProbability",
+    label: "Hit probability at most",
+    noun: "hit probability",
+    unit: "%",
+    by: 100,
+  },
+  { kind: "parSpread", label: "Par spread at most", noun: "par spread", unit: "bp", by: 10_000 },
 ];
 
 export type SizingReading =
@@ -141,13 +159,13 @@ export function placingWords(sized: SizedClass | undefined): string {
   if (sized.ok)
     return sized.binding === null
       ? "No limit binds: it takes everything below its detachment."
-      : `Bound by its limit: ${labelOf(sized.binding).label.toLowerCase()}.`;
+      : `Bound by its limit on ${labelOf(sized.binding).noun}.`;
   const at = `${textOf(Number(sized.detachment.toPrecision(10)), 100)} %`;
   if (sized.reason === "noRoom") return "Impossible: the classes above leave nothing of the pool.";
   if (sized.reason === "noLimit") return "Give it a limit: without one it has no place to stop.";
   if (sized.reason === "unreadable")
     return `Impossible: the base curve cannot be read at its detachment of ${at}.`;
-  const { label, unit, by } = labelOf(sized.limit!);
+  const { noun, unit, by } = labelOf(sized.limit!);
   const least = Number(((sized.least ?? 0) * by).toPrecision(4));
-  return `Impossible: even the thinnest class below ${at} has ${least} ${unit}, more than its limit (${label.toLowerCase()}). Raise the limit, or let the classes above reach less low.`;
+  return `Impossible: even the thinnest class below ${at} has a ${noun} of ${least} ${unit}, more than its limit. Raise the limit, or let the classes above reach less low.`;
 }

@@ -48,7 +48,7 @@ describe("what is to be sized, as typed", () => {
       limit: "hitProbability",
       least: 0.0321,
     } as const;
-    expect(placingWords(tight)).toContain("below 5 % has 3.21 %");
+    expect(placingWords(tight)).toContain("below 5 % has a hit probability of 3.21 %");
     expect(placingWords(undefined)).toContain("Not reached");
   });
 });

@@ -114,7 +114,7 @@ test("boundaries are placed from targets, said to be impossible where they are, 
   await limit.fill("0,00000000001");
   await expect(page.getByText(/takes everything|Bound by its limit/)).toBeVisible();
   await limit.fill("0.2");
-  await expect(page.getByText("Bound by its limit: expected loss at most.")).toBeVisible();
+  await expect(page.getByText("Bound by its limit on expected loss.")).toBeVisible();
   await page.getByRole("button", { name: "Add a class above what is left" }).click();
   await page.getByLabel(/^Class 2: Hit/).fill("0.0001");
   await expect(page.getByText(/Impossible: even the thinnest class below/)).toBeVisible();

@@ -78,7 +78,7 @@ export function Sizing({ kept }: { kept: Alternatives }) {
         <TargetTable
           form={form}
           sized={sized}
-          left={answer?.ok ? answer.left : null}
+          left={answer?.ok && placed ? answer.left : null}
           isPlaced={answer?.ok === true && !isWaiting}
           errorAt={errorAt}
           onChange={setTyped}

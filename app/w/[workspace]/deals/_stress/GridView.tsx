@@ -126,8 +126,8 @@ export function GridView({
         }}
       />
       <Text size="xs" c="dimmed" mt={4}>
-        Darker is further from the figure without a shock; plain shades are worse for the protection seller,
-        hatched ones better.
+        The stronger the shade, the further from the figure without a shock; plain shades are worse for the
+        protection seller, hatched ones better.
         {isHeld && " † A correlation met the end of its range and was held there."}
       </Text>
       {troubles.length > 0 && (
