@@ -3,6 +3,7 @@ export const rooms = [
   { slug: "", label: "Structure" },
   { slug: "pool", label: "Pool" },
   { slug: "correlation", label: "Correlation" },
+  { slug: "order", label: "Order" },
   { slug: "drivers", label: "Drivers" },
   { slug: "stress", label: "Stress" },
   { slug: "sizing", label: "Sizing" },
