@@ -77,9 +77,9 @@ export function PairMatrix({
   };
   return (
     <figure className={styles.figure}>
-      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: the matrix is walked by arrow keys */}
       <div
         role="application"
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: the matrix is walked by arrow keys
         tabIndex={0}
         className={styles.walked}
         aria-label={`Matrix of pairs, sorted by sector; arrow keys move. Now ${label(row)} and ${label(column)}. The figures of the pair stand above.`}
