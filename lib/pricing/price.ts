@@ -2,6 +2,7 @@ import { contractLegs, parSpread } from "../quant/tranche/legs";
 import { auditReport } from "./auditSection";
 import { baseReport } from "./baseSection";
 import { requestHash } from "./canonical";
+import { cutLists } from "./checks/sizes";
 import { contractReports } from "./contractSection";
 import { creditProblems } from "./creditProblems";
 import { ENGINE } from "./engine";
@@ -21,7 +22,8 @@ export type PricingOutcome =
   | { readonly ok: false; readonly problems: readonly PricingProblem[] };
 
 /** Prices a request of unknown origin: checks it, then values it. The same request gives the same bits everywhere. */
-export function price(raw: unknown): PricingOutcome {
+export function price(request: unknown): PricingOutcome {
+  const raw = cutLists(request);
   const checked = checkRequest(raw);
   const problems: PricingProblem[] = checked.ok ? [] : [...checked.problems];
   const valuation = checked.ok ? valuationOf(checked.request, problems) : curveProblems(raw, problems);

@@ -5,6 +5,7 @@ import { problemsOf } from "./checks/formProblems";
 import { asArray, asObject } from "./checks/loose";
 import { poolProblems } from "./checks/poolProblems";
 import { dateProblems } from "./checks/scheduleProblems";
+import { cutLists } from "./checks/sizes";
 import { contractProblems, trancheProblems } from "./checks/trancheProblems";
 import type { PricingProblem } from "./problem";
 import { type PricingRequest, requestSchema } from "./request";
@@ -15,7 +16,8 @@ export type Checked =
   | { readonly ok: false; readonly problems: readonly PricingProblem[] };
 
 /** Checks a request of unknown origin: form, ranges, and what fields say to each other. All problems at once. */
-export function checkRequest(raw: unknown): Checked {
+export function checkRequest(request: unknown): Checked {
+  const raw = cutLists(request);
   const parsed = requestSchema.safeParse(raw);
   const problems = parsed.success ? [] : problemsOf(parsed.error, raw);
   problems.push(...senseProblems(raw));
