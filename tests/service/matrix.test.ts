@@ -280,6 +280,8 @@ const rows: Record<string, Row> = {
   "notices.list": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
   "notices.count": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
   "notices.followed": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "activity.choices": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
+  "activity.export": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
   "activity.list": { expected: everyone, input: ({ workspaceId }) => ({ workspaceId }) },
 };
 

@@ -1,48 +1,25 @@
-import {
-  Stack,
-  Table,
-  TableScrollContainer,
-  TableTbody,
-  TableTd,
-  TableTh,
-  TableThead,
-  TableTr,
-  Text,
-  Title,
-} from "@mantine/core";
 import { ask } from "@/app/_ui/ask";
 import { queries } from "@/lib/activity/queries";
+import { Activity } from "./Activity";
 
 export const metadata = { title: "Activity" };
 
-/** What changed in the workspace, newest first. */
-export default async function Page({ params }: { params: Promise<{ workspace: string }> }) {
-  const { workspace } = await params;
-  const { rows, isLast } = await ask(queries.list, { workspaceId: workspace });
-  return (
-    <Stack>
-      <Title order={1}>Activity</Title>
-      <TableScrollContainer minWidth={480}>
-        <Table>
-          <TableThead>
-            <TableTr>
-              <TableTh>When (UTC)</TableTh>
-              <TableTh>Who</TableTh>
-              <TableTh>What</TableTh>
-            </TableTr>
-          </TableThead>
-          <TableTbody>
-            {rows.map((row) => (
-              <TableTr key={row.id}>
-                <TableTd>{row.at.slice(0, 19).replace("T", " ")}</TableTd>
-                <TableTd>{row.by}</TableTd>
-                <TableTd>{row.kind.replace(".", ": ")}</TableTd>
-              </TableTr>
-            ))}
-          </TableTbody>
-        </Table>
-      </TableScrollContainer>
-      {!isLast && <Text c="dimmed">Older entries are not shown.</Text>}
-    </Stack>
-  );
+/** What changed in the workspace, newest first, chosen by deal, person and kind. */
+export default async function Page({
+  params,
+  searchParams,
+}: {
+  params: Promise<{ workspace: string }>;
+  searchParams: Promise<{ deal?: string; person?: string; room?: string; before?: string }>;
+}) {
+  const { workspace: workspaceId } = await params;
+  const { deal, person, room, before } = await searchParams;
+  const chosen = { dealId: deal || undefined, personId: person || undefined, room: room || undefined };
+  const page = await ask(queries.list, {
+    workspaceId,
+    ...chosen,
+    before: before && /^\d+$/.test(before) ? before : undefined,
+  });
+  const choices = await ask(queries.choices, { workspaceId });
+  return <Activity workspaceId={workspaceId} page={page} choices={choices} chosen={chosen} />;
 }

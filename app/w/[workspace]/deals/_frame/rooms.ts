@@ -10,6 +10,7 @@ export const rooms = [
   { slug: "runs", label: "Runs" },
   { slug: "talk", label: "Talk" },
   { slug: "sign-off", label: "Sign-off" },
+  { slug: "history", label: "History" },
 ] as const satisfies readonly { slug: string; label: string }[];
 
 export type Room = (typeof rooms)[number];
