@@ -7,6 +7,7 @@ import { poolProblems } from "./checks/poolProblems";
 import { dateProblems } from "./checks/scheduleProblems";
 import { cutLists } from "./checks/sizes";
 import { contractProblems, trancheProblems } from "./checks/trancheProblems";
+import { workProblems } from "./checks/workProblems";
 import type { PricingProblem } from "./problem";
 import { type PricingRequest, requestSchema } from "./request";
 
@@ -21,6 +22,7 @@ export function checkRequest(request: unknown): Checked {
   const parsed = requestSchema.safeParse(raw);
   const problems = parsed.success ? [] : problemsOf(parsed.error, raw);
   problems.push(...senseProblems(raw));
+  if (parsed.success) problems.push(...workProblems(parsed.data));
   if (problems.length > 0) return { ok: false, problems: withoutRepeats(problems) };
   if (!parsed.success)
     return { ok: false, problems: [{ code: "form", path: "", message: "This is not a pricing request." }] };

@@ -10,6 +10,8 @@ export const LIMITS = {
   holidays: 5_000,
   years: 100,
   payments: 1_200,
+  /** Names × grid steps × dates × valuations: some tens of minutes of one core. */
+  work: 5e10,
 } as const;
 
 function within(low: number, high: number, words: string) {
