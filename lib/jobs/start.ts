@@ -1,3 +1,4 @@
+import type { Prisma } from "@/lib/generated/prisma/client";
 import type { Store } from "../platform/db/open";
 import { beforeClosing, store } from "../platform/db/store";
 import { logError } from "../platform/log";
@@ -8,6 +9,8 @@ import { takeTurn } from "./turn";
 
 const HANDS = 2;
 const LOOK_FOR_LOST = 30_000;
+/** A job that is being worked on says so every second or after its longest cell: silent for this long, its process is gone. */
+const SILENCE = 7 * 60_000;
 
 const shared = globalThis as typeof globalThis & { loadlineJobs?: Promise<() => Promise<void>> | undefined };
 
@@ -26,7 +29,7 @@ export function startJobs(): Promise<() => Promise<void>> {
 
 /**
  * Does background work on a store; resolves with the way to stop. Jobs left unfinished by a process that is gone are taken
- * up again: on the embedded database at once, on a server when the dead process's turn has expired.
+ * up again: on the embedded database at once, on a server when they have been silent for some minutes.
  */
 export async function workOn(opened: Store): Promise<() => Promise<void>> {
   let isStopping = false;
@@ -37,18 +40,22 @@ export async function workOn(opened: Store): Promise<() => Promise<void>> {
     queue.send(id).catch((error: unknown) => {
       if (!isStopping) logError("jobs", error);
     });
-  const sendAll = async (states: readonly string[]) => {
+  const sendAll = async (waiting: Prisma.JobWhereInput) => {
     const rows = await opened.database.job.findMany({
-      where: { state: { in: [...states] } },
+      where: waiting,
       orderBy: { createdAt: "asc" },
       select: { id: true },
     });
     for (const { id } of rows) await send(id);
   };
-  const unlisten = await opened.listen(JOBS_CHANNEL, (id) => void (id ? send(id) : sendAll(["queued"])));
-  await sendAll(opened.mode === "embedded" ? unfinished : ["queued"]);
+  const sendLost = () =>
+    sendAll({
+      OR: [{ state: "queued" }, { state: "running", updatedAt: { lt: new Date(Date.now() - SILENCE) } }],
+    });
+  const unlisten = await opened.listen(JOBS_CHANNEL, (id) => void (id ? send(id) : sendLost()));
+  await (opened.mode === "embedded" ? sendAll({ state: { in: [...unfinished] } }) : sendLost());
   const timer = setInterval(() => {
-    sendAll(["queued"]).catch((error: unknown) => logError("jobs", error));
+    sendLost().catch((error: unknown) => logError("jobs", error));
   }, LOOK_FOR_LOST);
   timer.unref();
   return async () => {

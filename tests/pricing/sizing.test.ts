@@ -104,4 +104,29 @@ describe("boundaries from targets", () => {
     expect(figures(found.attachment, 1, of).expectedLoss).toBeLessThanOrEqual(0.002 + 1e-9);
     expect(figures(found.attachment - step, 1, of).expectedLoss).toBeGreaterThan(0.002);
   });
+
+  // O. Vasicek, "The distribution of loan portfolio value", Risk, December 2002: the loss that a large pool exceeds with
+  // probability α is (1 − R) Φ((Φ⁻¹(p) + √ρ Φ⁻¹(1 − α)) / √(1 − ρ)); the values are from Python's statistics.NormalDist.
+  it.each([
+    [0.01, 0.2, 0.01, 0.0451504737],
+    [0.01, 0.2, 0.001, 0.0873151597],
+    [0.02, 0.12, 0.001, 0.0883694981],
+  ])("a large pool's hit probability: p %f, ρ %f, α %f", (probability, rho, alpha, boundary) => {
+    const of: PricingRequest = {
+      ...request,
+      schedule: { kind: "even", years: 1, perYear: 4 },
+      pool: [{ id: "N", notional: 1, recovery: 0.4, credit: { kind: "yearly", probability } }],
+      correlation: { kind: "flat", rho },
+      law: { kind: "largePool" },
+    };
+    const answer = sizeClasses({
+      request: of,
+      top: 1,
+      targets: [{ id: "A", limits: { hitProbability: alpha } }],
+      step: 1e-6,
+    });
+    const [found] = answer.ok ? answer.classes : [];
+    expect(found?.ok && found.attachment).toBeGreaterThanOrEqual(boundary - 1e-7);
+    expect(found?.ok && found.attachment).toBeLessThanOrEqual(boundary + 1.1e-6);
+  });
 });
