@@ -8,11 +8,22 @@ import { chromium } from "@playwright/test";
 import { build } from "esbuild";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { price } from "@/lib/pricing/price";
+import { base, flat, mixedPool, structure } from "../bench/priceCases";
 import { ensureChromium } from "../runner/chromium";
 
 const cases = join(process.cwd(), "tests", "reference", "data", "cases");
-const files = readdirSync(cases).sort();
-const requests: unknown[] = files.map((file) => JSON.parse(readFileSync(join(cases, file), "utf8")).request);
+const references = readdirSync(cases).sort();
+const yearly = { kind: "even", years: 2, perYear: 1 } as const;
+/** Beside the reference requests: mixed amounts on a shared grid, and a pool large enough to be taken by its cumulants. */
+const more = [
+  { ...structure(mixedPool(40), base), schedule: yearly },
+  { ...structure(mixedPool(800), flat), schedule: yearly },
+];
+const files = [...references, "40 mixed names", "800 mixed names"];
+const requests: unknown[] = [
+  ...references.map((file) => JSON.parse(readFileSync(join(cases, file), "utf8")).request),
+  ...more,
+];
 /** What stands in `requests` for each place to price, as the text of a function of the bundle. */
 const ENTRY = `
   import { price } from ${JSON.stringify(join(process.cwd(), "lib", "pricing", "price.ts"))};
@@ -60,7 +71,7 @@ beforeAll(async () => {
 
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
-describe("CANONICAL: one request has one report, byte for byte, wherever it is priced (all reference requests)", () => {
+describe("CANONICAL: one request has one report, byte for byte, wherever it is priced (all reference requests and large pools)", () => {
   it("in a worker thread, bundled and minified", { timeout: 300_000 }, async () => {
     expect(byCase(await inThread(""))).toEqual(byCase(here));
   });

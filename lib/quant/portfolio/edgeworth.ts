@@ -16,7 +16,7 @@ export interface AboveStrike {
   readonly square: number;
   /** Density at the strike. */
   readonly density: number;
-  /** Size of the first terms left out of the excess. */
+  /** The first terms left out of the excess, the fifth cumulant taken as a Poisson sum's: they change sign with the strike. */
   readonly leftOut: number;
 }
 
@@ -50,10 +50,8 @@ export function aboveStrike({ mean, deviation, skewness, kurtosis }: SumShape, s
     excess: three * z + four * (square - 1) + twiceThree * quartic,
     square: three + four * z + twiceThree * cubic,
   };
-  const mixed = Math.abs(skewness * kurtosis);
-  const next =
-    mixed * (Math.abs(cubic) / 120 + Math.abs(quintic) / 144) +
-    (Math.abs(skewness) ** 3 * Math.abs(septic)) / 1296;
+  const mixed = skewness * kurtosis;
+  const next = mixed * (cubic / 120 + quintic / 144) + (skewness ** 3 * septic) / 1296;
   return {
     probability: tail + density * correction.probability,
     excess: deviation * (density - z * tail + density * correction.excess),

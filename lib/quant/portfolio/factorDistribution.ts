@@ -51,7 +51,7 @@ export function factorDistribution(
   const onGrid = once(() => law(WHOLE));
   const byMoments = once(() => {
     if (!moments || grid.isExact || amounts.length < FEWEST_FOR_MOMENTS) return null;
-    const found = momentLaw(Float64Array.from(amounts), names, inside);
+    const found = momentLaw(Float64Array.from(amounts), names, inside, MOMENT_ERROR);
     count(found.evaluations);
     return found.error <= MOMENT_ERROR ? found.questions : null;
   });

@@ -1,9 +1,10 @@
 import { PANEL_POINTS } from "../kernel/recursion";
 import { normalCdf } from "../maths/normal";
+import { coherence } from "./continuumError";
 import { CumulantPanels } from "./cumulantPanels";
 import type { Distribution } from "./distributionQuestions";
 import { type AboveStrike, aboveStrike, type SumShape } from "./edgeworth";
-import type { FactorNames } from "./factorNames";
+import { ConditionalProbabilities, type FactorNames } from "./factorNames";
 import { legendreError, legendreProbe } from "./legendreError";
 import { type JudgedPanel, settledPanels } from "./settledPanels";
 
@@ -18,7 +19,13 @@ export interface MomentLaw {
 }
 
 interface WeightedShape extends SumShape {
+  readonly factor: number;
   readonly weight: number;
+}
+
+interface MixedAbove extends AboveStrike {
+  /** The sum of the left-out terms' sizes, before they cancel over the factor. */
+  readonly leftOutSize: number;
 }
 
 interface MomentPanel extends JudgedPanel {
@@ -27,19 +34,27 @@ interface MomentPanel extends JudgedPanel {
 
 const PROBE = legendreProbe(PANEL_POINTS);
 const ACCURACY = { absolute: 1e-8, relative: 1e-5 };
+/** Terms left out cancel over the factor; at least this share of their sizes is counted all the same. */
+const UNCANCELLED = 0.1;
 /** A conditional deviation below this is rounding: the sum is settled. */
 const SETTLED = 1e-9;
 
 /**
  * The law of a sum of many amounts in a one-factor copula: given the factor the sum is nearly normal, and four cumulants say
  * how nearly. Cost is linear in the names. The error is that of the first terms left out, plus that of taking amounts as
- * a continuum: the square of a lattice's step times the density over twelve (Euler–Maclaurin), the step at most the mean amount.
+ * a continuum: at most a lattice's, the square of its step (the mean amount) times the density over twelve (Euler–Maclaurin).
+ * Where that is not `enough` the amounts' own coherence says how much of it there is.
  */
-export function momentLaw(amounts: Float64Array, names: FactorNames, strikes: readonly number[]): MomentLaw {
+export function momentLaw(
+  amounts: Float64Array,
+  names: FactorNames,
+  strikes: readonly number[],
+  enough: number,
+): MomentLaw {
   const mean = amounts.reduce((sum, amount, i) => sum + amount * normalCdf(names.thresholds[i]!), 0);
   const cumulants = new CumulantPanels(amounts, names, mean);
   const shapes = mixedShapes(cumulants, strikes);
-  const sums = new Map<number, AboveStrike>();
+  const sums = new Map<number, MixedAbove>();
   const above = (strike: number) => {
     const found = sums.get(strike) ?? mixedAbove(shapes, strike);
     sums.set(strike, found);
@@ -49,10 +64,14 @@ export function momentLaw(amounts: Float64Array, names: FactorNames, strikes: re
     strike <= 0 ? mean - strike : Math.max(0, Math.min(mean, above(strike).excess));
   const probability = (strike: number) =>
     strike < 0 ? 1 : Math.min(1, Math.max(0, above(strike).probability));
-  const step = mean > 0 ? amounts.reduce((sum, amount) => sum + amount, 0) / amounts.length : 0;
+  const step = amounts.reduce((sum, amount) => sum + amount, 0) / amounts.length;
   const error = strikes.reduce((worst, strike) => {
-    const { density, leftOut } = above(strike);
-    return Math.max(worst, leftOut + (step * step * density) / 12);
+    const { density, leftOut, leftOutSize } = above(strike);
+    const expansion = Math.max(Math.abs(leftOut), UNCANCELLED * leftOutSize);
+    const lattice = (step * step * density) / 12;
+    const share =
+      expansion + lattice <= enough ? 1 : coherence(amounts, probabilitiesAt(names, shapes, strike));
+    return Math.max(worst, expansion + share * lattice);
   }, 0);
   const square = (strike: number) => above(strike).square;
   return {
@@ -72,8 +91,15 @@ export function momentLaw(amounts: Float64Array, names: FactorNames, strikes: re
   };
 }
 
-function mixedAbove(shapes: readonly WeightedShape[], strike: number): AboveStrike {
-  const sum = { probability: 0, excess: 0, square: 0, density: 0, leftOut: 0 };
+/** Default probabilities at the factor value where the sum is expected to meet the strike. */
+function probabilitiesAt(names: FactorNames, shapes: readonly WeightedShape[], strike: number): Float64Array {
+  const distance = (shape: WeightedShape) => Math.abs(shape.mean - strike);
+  const nearest = shapes.reduce((best, shape) => (distance(shape) < distance(best) ? shape : best));
+  return new ConditionalProbabilities(names).at(nearest.factor);
+}
+
+function mixedAbove(shapes: readonly WeightedShape[], strike: number): MixedAbove {
+  const sum = { probability: 0, excess: 0, square: 0, density: 0, leftOut: 0, leftOutSize: 0 };
   for (const shape of shapes) {
     const above = aboveStrike(shape, strike);
     sum.probability += shape.weight * above.probability;
@@ -81,6 +107,7 @@ function mixedAbove(shapes: readonly WeightedShape[], strike: number): AboveStri
     sum.square += shape.weight * above.square;
     sum.density += shape.weight * above.density;
     sum.leftOut += shape.weight * above.leftOut;
+    sum.leftOutSize += shape.weight * Math.abs(above.leftOut);
   }
   return sum;
 }
@@ -96,8 +123,8 @@ function mixedShapes(cumulants: CumulantPanels, strikes: readonly number[]): rea
         strikes,
       ),
   );
-  const beyond = normalCdf(-boundaries[boundaries.length - 1]!);
-  const settled = { mean: 0, deviation: 0, skewness: 0, kurtosis: 0, weight: beyond };
+  const factor = boundaries[boundaries.length - 1]!;
+  const settled = { factor, mean: 0, deviation: 0, skewness: 0, kurtosis: 0, weight: normalCdf(-factor) };
   return [...panels.flatMap((panel) => panel.shapes), settled];
 }
 
@@ -105,8 +132,9 @@ function shapeAt(cumulants: CumulantPanels, factor: number, weight: number): Wei
   const [mean, second, third, fourth] = cumulants.at(factor);
   const variance = Math.max(0, second);
   const deviation = Math.sqrt(variance);
-  if (deviation < SETTLED) return { mean, deviation: 0, skewness: 0, kurtosis: 0, weight };
+  if (deviation < SETTLED) return { factor, mean, deviation: 0, skewness: 0, kurtosis: 0, weight };
   return {
+    factor,
     mean,
     deviation,
     skewness: third / (variance * deviation),

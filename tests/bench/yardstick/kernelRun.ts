@@ -59,7 +59,7 @@ export function momentRun({ amounts, jobs, thresholds, unit }: KernelCase): () =
           const loadings = new Float64Array(amounts.length).fill(Math.sqrt(rho));
           const names = { thresholds: Float64Array.from(thresholds, (row) => row[date]!), loadings };
           const inside = strikes.map((strike) => strike * unit);
-          const { questions } = momentLaw(sizes, names, inside);
+          const { questions } = momentLaw(sizes, names, inside, 1e-7);
           return inside.map((strike) => questions.between(0, strike));
         }),
       ),
