@@ -20,6 +20,12 @@ export const anchorSchema = z.discriminatedUnion("kind", [
 ]);
 export type Anchor = z.infer<typeof anchorSchema>;
 
+/** What marks are counted by: a figure's path whatever the run, else kind and id; the deal itself has no mark. */
+export function markKey(anchor: Anchor): string | null {
+  if (anchor.kind === "deal") return null;
+  return `${anchor.kind} ${anchor.kind === "figure" ? anchor.path : anchor.id}`;
+}
+
 /** The figure at a path by ids; null where the report has no such class, contract or number. */
 export function figureAt(report: PricingReport, path: string): number | null {
   const [room = "", key = "", field = ""] = path.split("/");

@@ -54,15 +54,18 @@ const reply = defineCommand({
 const edit = defineCommand({
   name: "discussion.edit",
   input: editInput,
-  async run(context, { workspaceId, commentId, version, body }) {
+  async run(context, { workspaceId, commentId, version, body, mentions }) {
     const { comment, thread } = await ownComment(context, workspaceId, commentId);
     if (comment.version !== version)
       throw staleVersion("comment", { version: comment.version, body: comment.body });
     await context.tx.comment.update({
       where: { id: commentId },
-      data: { body, version: version + 1, editedAt: context.now },
+      data: { body, mentions: [...mentions], version: version + 1, editedAt: context.now },
     });
     await told(context, thread, "comment.edited", commentId, { body: comment.body }, { body });
+    const named = comment.mentions as string[];
+    const added = mentions.filter((userId) => !named.includes(userId));
+    await tellNamed(context, thread, commentId, body, added);
     return { version: version + 1 };
   },
 });
@@ -149,6 +152,17 @@ async function addComment(
   return id;
 }
 
+function tellNamed(
+  context: CommandContext,
+  { id: threadId, workspaceId, dealId }: ThreadPlace,
+  commentId: string,
+  body: string,
+  named: readonly string[],
+): Promise<void> {
+  const payload = { threadId, commentId, words: body.slice(0, 200) };
+  return notify(context, named, { workspaceId, dealId, kind: "mention", payload });
+}
+
 /** Whom the comment names, and who else takes part in the thread, have it in their inbox. */
 async function tellOthers(
   context: CommandContext,
@@ -156,8 +170,8 @@ async function tellOthers(
   commentId: string,
   { body, mentions }: { body: string; mentions: readonly string[] },
 ): Promise<void> {
+  await tellNamed(context, { id: threadId, workspaceId, dealId }, commentId, body, mentions);
   const payload = { threadId, commentId, words: body.slice(0, 200) };
-  await notify(context, mentions, { workspaceId, dealId, kind: "mention", payload });
   const others = await context.tx.comment.findMany({
     where: { threadId, authorId: { notIn: [...mentions] } },
     select: { authorId: true },

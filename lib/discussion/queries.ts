@@ -4,7 +4,7 @@ import { peopleNames } from "../platform/accounts/peopleNames";
 import { defineQuery, type QueryContext } from "../platform/operation";
 import type { PricingReport } from "../pricing/report";
 import { unpackedReport } from "../runs/stored";
-import { type Anchor, figureAt } from "./anchor";
+import { type Anchor, figureAt, markKey } from "./anchor";
 import { mayChange, mayComment } from "./policy";
 
 const list = defineQuery({
@@ -56,6 +56,32 @@ const list = defineQuery({
           })),
         };
       }),
+    };
+  },
+});
+
+/** How many open threads each thing of a deal has, for the marks beside them; and who can be named in a new one. */
+const marks = defineQuery({
+  name: "discussion.marks",
+  input: dealInput,
+  async run(context, { workspaceId, dealId }) {
+    const member = await context.member(workspaceId);
+    await dealIn(context, workspaceId, dealId);
+    const { tx } = context;
+    const threads = await tx.thread.findMany({
+      where: { dealId, resolvedAt: null },
+      select: { anchor: true },
+    });
+    const counts = new Map<string, number>();
+    for (const { anchor } of threads) {
+      const key = markKey(anchor as Anchor);
+      if (key !== null) counts.set(key, (counts.get(key) ?? 0) + 1);
+    }
+    const members = await tx.member.findMany({ where: { workspaceId }, include: { user: true } });
+    return {
+      may: { comment: mayComment(member) },
+      open: [...counts].map(([key, count]) => ({ key, count })),
+      members: members.map(({ userId, user }) => ({ userId, name: user.name })),
     };
   },
 });
@@ -129,4 +155,4 @@ async function pinsOf(
   };
 }
 
-export const queries = { list };
+export const queries = { list, marks };

@@ -21,6 +21,6 @@ export const startInput = dealInput.extend({
 });
 export const replyInput = inWorkspace.extend({ threadId, body, mentions });
 export const seenInput = dealInput.extend({ threadIds: z.array(threadId).max(500) });
-export const editInput = inWorkspace.extend({ commentId, version: z.number().int(), body });
+export const editInput = inWorkspace.extend({ commentId, version: z.number().int(), body, mentions });
 export const deleteInput = inWorkspace.extend({ commentId });
 export const resolveInput = inWorkspace.extend({ threadId, resolved: z.boolean() });

@@ -154,6 +154,50 @@ describe("TALK: unread, mentions, replies", () => {
   });
 });
 
+describe("TALK: changes and limits", () => {
+  it("tells of an edit only those whom it names anew", async () => {
+    const { workspaceId } = world;
+    const { owner, structurer } = world.people;
+    const { commentId } = await start("analyst", { body: "@owner", mentions: [owner.userId] });
+    const mentions = [owner.userId, structurer.userId];
+    const edit = { workspaceId, commentId, version: 1, body: "@owner @structurer", mentions };
+    await execute(discussion.edit, edit, as("analyst"));
+    expect(await inbox("owner")).toHaveLength(1);
+    expect((await inbox("structurer")).map(({ kind }) => kind)).toEqual(["mention"]);
+  });
+
+  it("counts open threads by what they are pinned to, and no longer when they are resolved", async () => {
+    const { workspaceId, dealId } = world;
+    const anchor = { kind: "class", id: "E", label: "First" };
+    const { threadId } = await start("analyst", { anchor });
+    await start("owner", { anchor });
+    await start("owner");
+    const open = async () =>
+      (await execute(discussionQueries.marks, { workspaceId, dealId }, as("viewer"))).open;
+    expect(await open()).toEqual([{ key: "class E", count: 2 }]);
+    await execute(discussion.resolve, { workspaceId, threadId, resolved: true }, as("analyst"));
+    expect(await open()).toEqual([{ key: "class E", count: 1 }]);
+  });
+
+  it("keeps a comment as it was typed, whatever it looks like, up to 4,000 characters", async () => {
+    const body = "<script>alert(1)</script> [x](javascript:alert(1))";
+    await start("analyst", { body });
+    expect((await threads("viewer"))[0]?.comments[0]?.body).toBe(body);
+    await expect(start("analyst", { body: "x".repeat(4_001) })).rejects.toMatchObject({
+      problems: [{ path: "body", message: "A comment has at most 4,000 characters." }],
+    });
+  });
+
+  it("lets one person write twenty comments a minute, and says when it is too many", async () => {
+    for (let i = 0; i < 20; i++) await start("structurer");
+    await expect(start("structurer")).rejects.toMatchObject({
+      kind: "limited",
+      problems: [{ code: "tooManyComments" }],
+    });
+    await start("owner");
+  });
+});
+
 describe("NOTICE: following", () => {
   it("tells a follower of a saved version and a run, marks what was read, and counts the rest", async () => {
     const { workspaceId, dealId } = world;

@@ -264,6 +264,7 @@ const rows: Record<string, Row> = {
     input: ({ workspaceId }) => ({ workspaceId, threadId: "none", resolved: true }),
   },
   "discussion.list": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
+  "discussion.marks": { expected: everyone, input: ({ workspaceId, dealId }) => ({ workspaceId, dealId }) },
   "discussion.seen": {
     expected: everyone,
     input: ({ workspaceId, dealId }) => ({ workspaceId, dealId, threadIds: [] }),

@@ -1,7 +1,7 @@
 import type { LiveEvent } from "./connection";
 
 /** Rooms of a deal whose pages show its threads or marks of them; "" is the structure. */
-const ROOMS_WITH_TALK = new Set(["", "runs", "talk"]);
+const ROOMS_WITH_TALK = new Set(["", "correlation", "drivers", "runs", "talk"]);
 
 /** Whether what a page shows may have changed by an event, so that it must be asked for again. */
 export function concerns({ dealId, kind }: Pick<LiveEvent, "dealId" | "kind">, path: string): boolean {

@@ -1,8 +1,10 @@
 "use client";
 
+import { Figure } from "@/app/_ui/Figure";
 import { FigureTable } from "@/app/_ui/table/FigureTable";
 import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import type { PricingReport } from "@/lib/pricing/report";
+import { PinMark } from "../_talk/Pins";
 
 type Base = NonNullable<PricingReport["baseCorrelation"]>;
 interface Quote {
@@ -60,6 +62,20 @@ export function QuotesTable({ base, quotes }: { base: Base; quotes: readonly Quo
       rows={lines}
       keyOf={({ strike }) => String(strike)}
       minWidth={360}
+      cellOf={({ key }, { strike, quote }) => {
+        if (key !== "strike" || !quote) return undefined;
+        const label = `quote ${percent(quote.attachment)} to ${percent(quote.detachment)} %`;
+        return (
+          <>
+            <Figure value={strike} unit="percent" />
+            <PinMark pin={{ kind: "quote", id: String(strike), label }} />
+          </>
+        );
+      }}
     />
   );
+}
+
+function percent(strike: number): string {
+  return String(Number((100 * strike).toPrecision(6)));
 }

@@ -8,6 +8,7 @@ import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import { TableTools } from "@/app/_ui/table/TableTools";
 import { useAddress } from "@/app/_ui/useAddress";
 import { useKept } from "@/app/_ui/useKept";
+import { PinMark } from "../_talk/Pins";
 import { BarCell } from "./BarCell";
 import styles from "./drivers.module.css";
 import { type NameMeasure, type NameRow, nameMeasures } from "./rows";
@@ -111,6 +112,9 @@ export function NameTable({
                   {shown.map((column) => (
                     <td key={column.key} data-text={column.unit === "text" || undefined}>
                       {cellOf(column, row, most.get(column.key) ?? 0)}
+                      {column.key === "name" && (
+                        <PinMark pin={{ kind: "name", id: row.id, label: row.name || row.id }} />
+                      )}
                     </td>
                   ))}
                 </tr>

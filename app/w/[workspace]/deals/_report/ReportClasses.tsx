@@ -7,6 +7,7 @@ import { FigureTable } from "@/app/_ui/table/FigureTable";
 import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import { useKept } from "@/app/_ui/useKept";
 import type { PricingReport, TrancheReport } from "@/lib/pricing/report";
+import { PinMark } from "../_talk/Pins";
 import { Pointable } from "../_talk/Pointing";
 import { hiddenTrancheColumns, type LossesIn, lossesIn, trancheColumns } from "./trancheColumns";
 
@@ -70,6 +71,13 @@ export function ReportClasses({
       hiddenAtFirst={hiddenTrancheColumns}
       minWidth={1000}
       cellOf={(column, row) => {
+        if (column.key === "name")
+          return (
+            <>
+              {nameOf(row.id)}
+              <PinMark pin={{ kind: "class", id: row.id, label: nameOf(row.id) }} />
+            </>
+          );
         const value = column.value(row);
         if (column.unit === "text" || typeof value !== "number" || measure !== "class") return undefined;
         if (!PINNED.has(column.key)) return undefined;

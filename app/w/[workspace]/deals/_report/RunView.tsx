@@ -128,16 +128,36 @@ export function RunView({
                 <Table.Tr key={contract.n}>
                   <Table.Td>{contract.n}</Table.Td>
                   <Table.Td ta="right">
-                    <Figure value={contract.probability} unit="percent" />
+                    <Pointable
+                      path={`nthToDefault/${contract.n}/probability`}
+                      label={`Probability of default ${contract.n}`}
+                    >
+                      <Figure value={contract.probability} unit="percent" />
+                    </Pointable>
                   </Table.Td>
                   <Table.Td ta="right">
-                    <Figure value={contract.parSpread} unit="basisPoints" />
+                    <Pointable
+                      path={`nthToDefault/${contract.n}/parSpread`}
+                      label={`Par spread of default ${contract.n}`}
+                    >
+                      <Figure value={contract.parSpread} unit="basisPoints" />
+                    </Pointable>
                   </Table.Td>
                   <Table.Td ta="right">
-                    <Figure value={contract.protectionLeg} unit="percent" />
+                    <Pointable
+                      path={`nthToDefault/${contract.n}/protectionLeg`}
+                      label={`Protection leg of default ${contract.n}`}
+                    >
+                      <Figure value={contract.protectionLeg} unit="percent" />
+                    </Pointable>
                   </Table.Td>
                   <Table.Td ta="right">
-                    <Figure value={contract.annuity} unit="years" />
+                    <Pointable
+                      path={`nthToDefault/${contract.n}/annuity`}
+                      label={`Annuity of default ${contract.n}`}
+                    >
+                      <Figure value={contract.annuity} unit="years" />
+                    </Pointable>
                   </Table.Td>
                 </Table.Tr>
               ))}

@@ -1,6 +1,6 @@
 "use client";
 
-import { Button, NativeSelect, Text, TextInput } from "@mantine/core";
+import { Button, Group, NativeSelect, Text, TextInput } from "@mantine/core";
 import { useMemo } from "react";
 import { FigureTable } from "@/app/_ui/table/FigureTable";
 import type { FigureColumn } from "@/app/_ui/table/figureColumns";
@@ -11,6 +11,7 @@ import { typedNumber } from "@/lib/deals/typed";
 import type { TrancheReport } from "@/lib/pricing/report";
 import { useDeal } from "../_frame/dealContext";
 import { hiddenTrancheColumns, type LossesIn, lossesIn, trancheColumns } from "../_report/trancheColumns";
+import { PinMark } from "../_talk/Pins";
 import { ClassActions, newKey } from "./ClassActions";
 
 /** A class as typed, with the figures there are of it. */
@@ -101,6 +102,13 @@ export function ClassTable({ tranches, currency }: { tranches: readonly TrancheR
           minWidth={1100}
           cellOf={(column, row) => {
             const typed = typedColumns.find(({ key }) => key === column.key);
+            if (column.key === "name")
+              return (
+                <Group gap={0} wrap="nowrap">
+                  {typed && mayEdit ? field(typed.key, typed.header, row) : row.typed.name}
+                  <ClassMark row={row.typed} />
+                </Group>
+              );
             return typed && mayEdit ? field(typed.key, typed.header, row) : undefined;
           }}
           actions={
@@ -137,4 +145,11 @@ export function ClassTable({ tranches, currency }: { tranches: readonly TrancheR
       )}
     </div>
   );
+}
+
+/** A class can be talked about once it is saved: only then has it an id that stays. */
+function ClassMark({ row }: { row: ClassText }) {
+  const { deal } = useDeal();
+  const saved = deal?.content.classes.find(({ id }) => id === row.id);
+  return saved ? <PinMark pin={{ kind: "class", id: saved.id, label: saved.name ?? saved.id }} /> : null;
 }

@@ -15,11 +15,14 @@ export function Comment({
   dealId,
   comment,
   members,
+  isLinked,
 }: {
   workspaceId: string;
   dealId: string;
   comment: CommentShown;
   members: readonly MemberName[];
+  /** Whether the page's address leads to this comment. */
+  isLinked: boolean;
 }) {
   const router = useRouter();
   const [isEditing, setEditing] = useState(false);
@@ -35,7 +38,7 @@ export function Comment({
     router.refresh();
   };
   return (
-    <div id={place} className={styles.comment}>
+    <div id={place} className={styles.comment} data-linked={isLinked || undefined}>
       <Group gap="xs">
         <Text fw={600} size="sm">
           {comment.author}
@@ -70,9 +73,10 @@ export function Comment({
           label="Edit the comment"
           act="Save"
           members={members}
-          send={async (body) => {
+          send={async (body, mentions) => {
             const { id: commentId, version } = comment;
-            const answer = await call("discussion.edit", { workspaceId, commentId, version, body });
+            const input = { workspaceId, commentId, version, body, mentions };
+            const answer = await call("discussion.edit", input);
             if (answer.ok) setEditing(false);
             return answer;
           }}

@@ -7,6 +7,7 @@ import type { Answer } from "@/app/_ui/call";
 import { Problems } from "@/app/_ui/Problems";
 import { useKept } from "@/app/_ui/useKept";
 import type { Problem } from "@/lib/platform/errors";
+import { mentionsIn } from "./mentions";
 import type { MemberName } from "./shown";
 import styles from "./talk.module.css";
 
@@ -47,8 +48,7 @@ export function Composer({
         );
   const submit = async () => {
     setBusy(true);
-    const mentions = members.filter(({ name }) => body.includes(`@${name}`)).map(({ userId }) => userId);
-    const answer = await send(body, mentions);
+    const answer = await send(body, mentionsIn(body, members));
     setBusy(false);
     setProblems(answer.ok ? [] : answer.problems);
     if (answer.ok) {

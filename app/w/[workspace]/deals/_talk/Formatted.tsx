@@ -1,10 +1,11 @@
 "use client";
 
 import Markdown from "react-markdown";
+import { readable } from "./mentions";
 import type { MemberName } from "./shown";
 import styles from "./talk.module.css";
 
-const ALLOWED = ["p", "strong", "em", "code", "pre", "ul", "ol", "li", "a", "br"];
+const ALLOWED = ["p", "strong", "em", "code", "pre", "ul", "ol", "li", "a", "br", "img"];
 
 /** A comment with simple formatting: bold, code, lists, links and line breaks; anything else is text. Nothing can run. */
 export function Formatted({ body, members }: { body: string; members: readonly MemberName[] }) {
@@ -19,6 +20,8 @@ export function Formatted({ body, members }: { body: string; members: readonly M
               {children}
             </a>
           ),
+          // Nothing is fetched from elsewhere: a picture stays text.
+          img: ({ alt, src }) => `![${alt ?? ""}](${typeof src === "string" ? src : ""})`,
           strong: ({ children }) => {
             const isName =
               typeof children === "string" && members.some(({ name }) => `@${name}` === children);
@@ -30,11 +33,4 @@ export function Formatted({ body, members }: { body: string; members: readonly M
       </Markdown>
     </div>
   );
-}
-
-/** Line breaks stay as typed, bare web addresses become links, people named by @ stand out. */
-function readable(body: string, members: readonly MemberName[]): string {
-  const linked = body.replace(/(^|[\s(])(https?:\/\/[^\s<>")]+)/g, "$1<$2>");
-  const named = members.reduce((text, { name }) => text.split(`@${name}`).join(`**@${name}**`), linked);
-  return named.replace(/\n/g, "  \n");
 }

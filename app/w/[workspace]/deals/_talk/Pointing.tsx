@@ -1,52 +1,19 @@
 "use client";
 
-import { Button, Modal } from "@mantine/core";
-import Link from "next/link";
+import { Button } from "@mantine/core";
 import { createContext, type ReactNode, useContext, useState } from "react";
-import { call } from "@/app/_ui/call";
-import { roomAddress } from "../_frame/rooms";
-import { Composer } from "./Composer";
-import styles from "./pointing.module.css";
-import type { TalkShown } from "./shown";
+import { PinMark, usePins } from "./Pins";
+import styles from "./pins.module.css";
 
-interface Pointed {
-  readonly path: string;
-  readonly label: string;
-}
+const PointingContext = createContext<{ readonly isOn: boolean; readonly runId: string } | null>(null);
 
-interface PointingAtHand {
-  readonly isOn: boolean;
-  readonly address: string;
-  /** Open threads by the path of their figure. */
-  readonly counts: ReadonlyMap<string, number>;
-  point(figure: Pointed): void;
-}
-
-const PointingContext = createContext<PointingAtHand | null>(null);
-
-/** Lets a reader point at a figure of a run and start a thread on it; marks figures that have open threads. */
-export function Pointing({
-  workspaceId,
-  dealId,
-  runId,
-  talk,
-  children,
-}: {
-  workspaceId: string;
-  dealId: string;
-  runId: string;
-  talk: TalkShown;
-  children: ReactNode;
-}) {
+/** Lets a reader point at any figure of a run and start a thread on it. */
+export function Pointing({ runId, children }: { runId: string; children: ReactNode }) {
   const [isOn, setOn] = useState(false);
-  const [figure, setFigure] = useState<Pointed | null>(null);
-  const counts = new Map<string, number>();
-  for (const { pin, isResolved } of talk.threads)
-    if (pin.kind === "figure" && !isResolved) counts.set(pin.path, (counts.get(pin.path) ?? 0) + 1);
-  const address = roomAddress(workspaceId, dealId, "talk");
+  const pins = usePins();
   return (
-    <PointingContext.Provider value={{ isOn, address, counts, point: setFigure }}>
-      {talk.may.comment && (
+    <PointingContext.Provider value={{ isOn, runId }}>
+      {pins?.mayComment && (
         <Button
           size="compact-sm"
           w="fit-content"
@@ -59,38 +26,16 @@ export function Pointing({
         </Button>
       )}
       {children}
-      <Modal
-        opened={figure !== null}
-        onClose={() => setFigure(null)}
-        title={`Thread on ${figure?.label ?? ""}`}
-      >
-        {figure && (
-          <Composer
-            draft={`pin ${runId} ${figure.path}`}
-            label="What about this figure"
-            act="Post"
-            members={talk.members}
-            send={async (body, mentions) => {
-              const anchor = { kind: "figure" as const, runId, ...figure };
-              const answer = await call("discussion.start", { workspaceId, dealId, body, mentions, anchor });
-              if (answer.ok) {
-                setFigure(null);
-                setOn(false);
-              }
-              return answer;
-            }}
-          />
-        )}
-      </Modal>
     </PointingContext.Provider>
   );
 }
 
-/** A figure that can be pointed at; outside a pointing page it is just the figure. */
-export function Pointable({ path, label, children }: Pointed & { children: ReactNode }) {
+/** A figure that can be pointed at, marked when it has open threads; outside a run it is just the figure. */
+export function Pointable({ path, label, children }: { path: string; label: string; children: ReactNode }) {
   const pointing = useContext(PointingContext);
-  if (!pointing) return children;
-  const count = pointing.counts.get(path) ?? 0;
+  const pins = usePins();
+  if (!pointing || !pins) return children;
+  const pin = { kind: "figure" as const, runId: pointing.runId, path, label };
   return (
     <>
       {pointing.isOn ? (
@@ -98,22 +43,14 @@ export function Pointable({ path, label, children }: Pointed & { children: React
           type="button"
           className={styles.target}
           aria-label={`Talk about ${label}`}
-          onClick={() => pointing.point({ path, label })}
+          onClick={() => pins.start(pin)}
         >
           {children}
         </button>
       ) : (
         children
       )}
-      {count > 0 && (
-        <Link
-          href={`${pointing.address}?find=${encodeURIComponent(label)}`}
-          className={styles.mark}
-          aria-label={`${count} open ${count === 1 ? "thread" : "threads"} on ${label}`}
-        >
-          {count}
-        </Link>
-      )}
+      <PinMark pin={pin} isQuiet />
     </>
   );
 }

@@ -9,6 +9,7 @@ import { FollowChoice } from "./FollowChoice";
 import { pinWords } from "./pinWords";
 import type { TalkShown, ThreadShown } from "./shown";
 import { Thread } from "./Thread";
+import { useLinkedComment } from "./useLinkedComment";
 
 type Choice = "open" | "resolved" | "mine" | "unread" | "all";
 
@@ -38,6 +39,7 @@ export function Talk({
     () => talk.threads.filter((thread) => isChosen(thread, choice as Choice) && hasWords(thread, sought)),
     [talk.threads, choice, sought],
   );
+  const linked = useLinkedComment();
   const unread = shown.filter((thread) => thread.isUnread).map(({ id }) => id);
   const unreadKey = unread.join(" ");
   useEffect(() => {
@@ -96,6 +98,7 @@ export function Talk({
           thread={thread}
           members={talk.members}
           mayComment={talk.may.comment}
+          linked={linked}
         />
       ))}
     </Stack>

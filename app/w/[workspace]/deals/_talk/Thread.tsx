@@ -16,12 +16,15 @@ export function Thread({
   thread,
   members,
   mayComment,
+  linked,
 }: {
   workspaceId: string;
   dealId: string;
   thread: ThreadShown;
   members: readonly MemberName[];
   mayComment: boolean;
+  /** The comment that the page's address leads to. */
+  linked: string | null;
 }) {
   const router = useRouter();
   const resolve = async () => {
@@ -57,6 +60,7 @@ export function Thread({
             dealId={dealId}
             comment={comment}
             members={members}
+            isLinked={comment.id === linked}
           />
         ))}
         {mayComment && (

@@ -1,7 +1,6 @@
 import { notFound } from "next/navigation";
 import { ask } from "@/app/_ui/ask";
 import { queries as deals } from "@/lib/deals/queries";
-import { queries as discussion } from "@/lib/discussion/queries";
 import { queries } from "@/lib/runs/queries";
 import { RunView } from "../../../_report/RunView";
 import { Pointing } from "../../../_talk/Pointing";
@@ -15,9 +14,8 @@ export default async function Page({
   const deal = await ask(deals.open, { workspaceId, dealId });
   const run = await ask(queries.open, { workspaceId, runId });
   if (run.dealId !== dealId) notFound();
-  const talk = await ask(discussion.list, { workspaceId, dealId });
   return (
-    <Pointing workspaceId={workspaceId} dealId={dealId} runId={runId} talk={talk}>
+    <Pointing runId={runId}>
       <RunView
         workspaceId={workspaceId}
         deal={{ id: deal.id, name: deal.name }}
