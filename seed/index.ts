@@ -18,9 +18,12 @@ const FOLDER = join(process.cwd(), "seed");
 const EMAIL = "structurer@demo.invalid";
 
 interface DemoFile {
-  readonly market: unknown;
+  readonly market: { readonly content: object };
+  /** Quotes of Harbour 125: the engine's own prices on an invented base curve, each moved by a few hundredths of a percent. */
+  readonly quoted: object;
   readonly tranched: Record<string, unknown>;
   readonly basket: Record<string, unknown>;
+  readonly onBaseCurve: Record<string, unknown>;
   readonly talk: readonly string[];
 }
 
@@ -55,21 +58,26 @@ async function plant(structurer: Actor, analyst: Actor): Promise<void> {
   const { workspaceId } = await execute(workspaceCommands.create, { name: "Demo desk" }, asStructurer);
   const { link } = await execute(workspaceCommands.invite, { workspaceId, role: "analyst" }, asStructurer);
   await execute(workspaceCommands.join, { token: link.split("/").at(-1) }, asAnalyst);
-  const pool = async (file: string, name: string) => {
-    const names = readPool(readFileSync(join(FOLDER, file), "utf8")).rows.map((row) => row.name);
+  const pool = async (file: string, name: string, isTaken = (_: unknown, _i: number) => true) => {
+    const { rows } = readPool(readFileSync(join(FOLDER, file), "utf8"));
+    const names = rows.map((row) => row.name).filter(isTaken);
     return execute(poolCommands.create, { workspaceId, name, currency: "EUR", names }, asStructurer);
   };
-  const { marketId } = await execute(
-    marketCommands.create,
-    { workspaceId, ...(demo.market as object) },
-    asStructurer,
-  );
   const wide = await pool("pool.csv", "Harbour 125");
   const ten = await pool("basket.csv", "Ten names");
+  const half = await pool("pool.csv", "Every other of Harbour", (_, i) => i % 2 === 0);
+  const { content, ...market } = demo.market;
+  const quotedPools = [{ ...demo.quoted, poolId: wide.poolId }];
+  const { marketId } = await execute(
+    marketCommands.create,
+    { workspaceId, ...market, content: { ...content, quotedPools } },
+    asStructurer,
+  );
   const deal = (fields: Record<string, unknown>, poolId: string) =>
     execute(dealCommands.create, { workspaceId, marketId, poolId, ...fields }, asStructurer);
   const tranched = await deal(demo.tranched, wide.poolId);
   const basket = await deal(demo.basket, ten.poolId);
+  await deal(demo.onBaseCurve, half.poolId);
   for (const { dealId } of [tranched, basket]) {
     await execute(runCommands.price, { workspaceId, dealId, version: 1, note: "First look" }, asStructurer);
   }

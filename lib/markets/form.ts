@@ -136,7 +136,8 @@ function readQuotedPools(form: MarketForm, problems: Record<string, string>): Qu
     if (name.trim() === "") problems[`${at}.name`] = "Give the quoted pool a name.";
     if (poolId === "") problems[`${at}.poolId`] = "Choose a pool.";
     const read = readQuotes(quotes, form.scheduleKind === "even");
-    if (read.problems.length > 0) problems[`${at}.maturities`] = read.problems.join(" ");
+    if (read.problems.length > 0)
+      problems[`${at}.maturities`] = read.problems.map(({ message }) => message).join(" ");
     return { key, name: name.trim(), poolId, maturities: read.maturities };
   });
 }

@@ -1,10 +1,12 @@
 "use client";
 
-import { Button, Fieldset, Group, NativeSelect, Stack, Text, Textarea, TextInput } from "@mantine/core";
+import { Button, Fieldset, Group, NativeSelect, Stack, Text, TextInput } from "@mantine/core";
 import type { QuotedPoolText } from "@/lib/markets/form";
-import { type FieldsProps, problemAt, problemsBelow } from "./fields";
+import { type FieldsProps, problemAt } from "./fields";
+import { QuotesGrid } from "./QuotesGrid";
+import { quoteProblems } from "./quoteProblems";
 
-/** Pools whose tranches are quoted: each with its quotes, a line each, as they come from a spreadsheet. */
+/** Pools whose tranches are quoted: each with its quotes in a grid. */
 export function QuotedPoolFields({
   form,
   problems,
@@ -20,7 +22,7 @@ export function QuotedPoolFields({
       quotedPools: [...form.quotedPools, { key, name: "", poolId: pools[0]?.id ?? "", quotes: "" }],
     });
   };
-  const first = form.scheduleKind === "even" ? "5" : "2031-12-20";
+  const isEven = form.scheduleKind === "even";
   return (
     <Fieldset legend="Quoted pools">
       <Stack gap="md">
@@ -50,18 +52,13 @@ export function QuotedPoolFields({
                   onChange={(event) => set(i, { poolId: event.currentTarget.value })}
                 />
               </Group>
-              <Textarea
-                label="Quotes, one a line"
-                description="Maturity, attachment (%), detachment (%), coupon (bp), upfront (%); may be pasted from a spreadsheet"
-                placeholder={`${first}\t0\t3\t500\t41,5`}
-                autosize
-                minRows={4}
-                maxRows={16}
-                classNames={{ input: "figure" }}
-                value={row.quotes}
-                readOnly={isReadOnly}
-                error={problemsBelow(problems, `${at}.maturities`)}
-                onChange={(event) => set(i, { quotes: event.currentTarget.value })}
+              <QuotesGrid
+                name={row.name}
+                text={row.quotes}
+                isEven={isEven}
+                problems={quoteProblems(row.quotes, isEven, problems, at)}
+                isReadOnly={isReadOnly}
+                onChange={(quotes) => set(i, { quotes })}
               />
               {!isReadOnly && (
                 <Group>
