@@ -13,7 +13,8 @@ export const arbitrageWords: Record<Mark["kind"], string> = {
   convex: "a higher strip would lose more than a lower one",
 };
 
-const columns: FigureColumn<Mark>[] = [
+const columns: FigureColumn<Mark & { readonly number: number }>[] = [
+  { key: "number", header: "Mark", unit: "plain", value: ({ number }) => number },
   { key: "kind", header: "Arbitrage at maturity", unit: "text", value: ({ kind }) => arbitrageWords[kind] },
   { key: "from", header: "From", unit: "percent", unitWords: "%", value: ({ from }) => from },
   { key: "to", header: "To", unit: "percent", unitWords: "%", value: ({ to }) => to },
@@ -32,7 +33,7 @@ export function ArbitrageTable({ marks }: { marks: readonly Mark[] }) {
     <FigureTable
       name="arbitrage"
       columns={columns}
-      rows={marks}
+      rows={marks.map((mark, i) => ({ ...mark, number: i + 1 }))}
       keyOf={({ kind, from }) => `${kind} ${from}`}
       minWidth={360}
     />

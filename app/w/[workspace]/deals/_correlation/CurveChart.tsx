@@ -39,10 +39,21 @@ export function CurveChart({
   ]);
   const reach = Math.min(1, 1.15 * Math.max(...base.nodes.map(({ strike }) => strike), ...strikes));
   const rhoAt = readBaseCurve(base.nodes, reading);
-  const curve = Array.from({ length: POINTS + 1 }, (_, i) => {
-    const strike = (reach * i) / POINTS;
-    return { strike: strike * 100, rho: rhoAt(strike) * 100 };
-  });
+  const first = base.nodes[0]!.strike;
+  const last = base.nodes.at(-1)!.strike;
+  const curve: { strike: number; rho?: number; beyond?: number }[] = Array.from(
+    { length: POINTS + 1 },
+    (_, i) => {
+      const strike = (reach * i) / POINTS;
+      const rho = rhoAt(strike) * 100;
+      return { strike: strike * 100, ...(strike < first || strike > last ? { beyond: rho } : { rho }) };
+    },
+  );
+  for (const strike of [first, last].filter((at) => at <= reach)) {
+    const rho = rhoAt(strike) * 100;
+    curve.push({ strike: strike * 100, rho, beyond: rho });
+  }
+  curve.sort((one, other) => one.strike - other.strike);
   const nodes = base.nodes.map(({ strike, rho }) => ({ strike: strike * 100, node: rho * 100 }));
   const used = classes.flatMap(({ attachment, detachment, correlation }) => [
     ...(attachment > 0 && correlation.attachment !== null
@@ -58,9 +69,9 @@ export function CurveChart({
       aria-label="Base correlation curve; its figures are in the tables beside it"
     >
       <Text component="figcaption" size="sm">
-        Base correlation (%) by strike (% of pool): the curve, its quoted strikes (squares), the deal's
-        strikes with the correlation they get (triangles)
-        {base.arbitrage.length > 0 ? ", arbitrage shaded" : ""}
+        Base correlation (%) by strike (% of pool): the curve (dashed beyond its quoted strikes), its quoted
+        strikes (squares), the deal's strikes with the correlation they get (triangles)
+        {base.arbitrage.length > 0 ? ", arbitrage shaded and numbered as in the table" : ""}
       </Text>
       <ResponsiveContainer width="100%" height={320} initialDimension={{ width: 520, height: 320 }}>
         <ComposedChart margin={{ top: 8, right: 12, bottom: 4, left: 0 }}>
@@ -74,13 +85,14 @@ export function CurveChart({
             unit=" %"
           />
           <YAxis domain={[0, 100]} fontSize={11} width={40} unit=" %" />
-          {base.arbitrage.map(({ from, to, kind }) => (
+          {base.arbitrage.map(({ from, to, kind }, i) => (
             <ReferenceArea
               key={`${kind} ${from}`}
               x1={from * 100}
               x2={Math.min(to, reach) * 100}
               fill="light-dark(#c2410c, #fb923c)"
               fillOpacity={0.22}
+              label={{ value: String(i + 1), position: "insideTop", fontSize: 11, fill: "currentColor" }}
             />
           ))}
           <Tooltip
@@ -94,6 +106,16 @@ export function CurveChart({
             dot={false}
             stroke="light-dark(#0b6e66, #6cc4bb)"
             strokeWidth={2}
+            isAnimationActive={false}
+          />
+          <Line
+            data={curve}
+            dataKey="beyond"
+            name="Beyond the strikes"
+            dot={false}
+            stroke="light-dark(#0b6e66, #6cc4bb)"
+            strokeWidth={2}
+            strokeDasharray="5 4"
             isAnimationActive={false}
           />
           <Scatter

@@ -1,0 +1,19 @@
+import type { CorrelationInput, NameInput } from "./request";
+
+/** The correlation of two names' asset values; that of their defaults is another figure, and lower. Null under a base curve. */
+export function assetCorrelation(
+  correlation: CorrelationInput,
+  one: Pick<NameInput, "loading" | "sector">,
+  other: Pick<NameInput, "loading" | "sector">,
+): number | null {
+  switch (correlation.kind) {
+    case "flat":
+      return correlation.rho;
+    case "loadings":
+      return (one.loading ?? 0) * (other.loading ?? 0);
+    case "sector":
+      return one.sector === other.sector ? correlation.within : correlation.between;
+    case "base":
+      return null;
+  }
+}
