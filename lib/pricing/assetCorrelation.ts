@@ -1,10 +1,15 @@
-import type { CorrelationInput, NameInput } from "./request";
+import type { CorrelationInput } from "./request";
+
+interface Correlated {
+  readonly loading?: number | null;
+  readonly sector?: string | null;
+}
 
 /** The correlation of two names' asset values; that of their defaults is another figure, and lower. Null under a base curve. */
 export function assetCorrelation(
   correlation: CorrelationInput,
-  one: Pick<NameInput, "loading" | "sector">,
-  other: Pick<NameInput, "loading" | "sector">,
+  one: Correlated,
+  other: Correlated,
 ): number | null {
   switch (correlation.kind) {
     case "flat":

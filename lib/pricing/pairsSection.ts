@@ -1,6 +1,7 @@
 import { eventCorrelation, jointDefault } from "../quant/basket/pairs";
 import { defaultProbability } from "../quant/market/survivalCurve";
 import { defaultThreshold } from "../quant/portfolio/thresholds";
+import { assetCorrelation } from "./assetCorrelation";
 import type { PricingReport, ReportWarning } from "./report";
 import type { Valuation } from "./valuation";
 
@@ -24,11 +25,7 @@ export function pairsReport(
   const maturity = portfolio.times[portfolio.times.length - 1]!;
   const probabilities = names.map((name) => defaultProbability(name.curve, maturity));
   const thresholds = names.map((name) => defaultThreshold(name.curve, maturity));
-  const asset = (i: number, j: number): number => {
-    if (correlation.kind === "flat") return correlation.rho;
-    if (correlation.kind === "loadings") return (names[i]!.loading ?? 0) * (names[j]!.loading ?? 0);
-    return names[i]!.sector === names[j]!.sector ? correlation.within : correlation.between;
-  };
+  const asset = (i: number, j: number) => assetCorrelation(correlation, names[i]!, names[j]!) ?? 0;
   const joint = names.map((_, i) => names.map((_, j) => (i === j ? probabilities[i]! : 0)));
   const event: (number | null)[][] = names.map((_, i) =>
     names.map((_, j) => (i === j && probabilities[i]! > 0 && probabilities[i]! < 1 ? 1 : null)),

@@ -69,14 +69,16 @@ export function Order() {
             : `Pairs are laid out for pools of up to ${MOST_PAIRED} names.`}
         </Text>
       )}
+      <Problems
+        title="Why there are no new figures of pairs"
+        problems={problems.length > 0 || !isPaired ? [] : pairs.problems}
+      />
       {pairs.isBusy && (
         <Text size="sm" c="dimmed" role="status">
           <Loader size="xs" /> Working out the pairs…
         </Text>
       )}
-      {isPaired && pairs.report?.pairs && pairs.of && (
-        <Pairs pairs={pairs.report.pairs} names={pairs.of.pool} />
-      )}
+      {isPaired && pairs.report?.pairs && pairs.of && <Pairs pairs={pairs.report.pairs} of={pairs.of} />}
     </>
   );
 }

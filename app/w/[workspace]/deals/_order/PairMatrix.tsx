@@ -1,13 +1,15 @@
 "use client";
 
 import { useComputedColorScheme } from "@mantine/core";
-import { type KeyboardEvent, type PointerEvent, useEffect, useRef } from "react";
+import { type KeyboardEvent, type PointerEvent, useEffect, useRef, useState } from "react";
+import { Figure } from "@/app/_ui/Figure";
 import { fourDigits } from "@/app/_ui/figures";
 import type { NameInput } from "@/lib/pricing/request";
 import styles from "./pairMatrix.module.css";
 
 const SIDE = 620;
-const STEPS = [0.15, 0.3, 0.45, 0.6, 0.8, 1];
+/** Shares of the highest value that the legend shows. */
+const STEPS = [0.02, 0.1, 0.25, 0.5, 0.75, 1];
 
 /** A matrix of pairs as a heat map sorted by sector: a pair is chosen by pointer or by arrow keys, its figures stand above. */
 export function PairMatrix({
@@ -16,6 +18,7 @@ export function PairMatrix({
   values,
   chosen,
   label,
+  measure,
   onChoose,
 }: {
   names: readonly NameInput[];
@@ -23,9 +26,12 @@ export function PairMatrix({
   values: readonly (readonly (number | null)[])[];
   chosen: readonly [number, number];
   label(i: number): string;
+  /** What the values are. */
+  measure: string;
   onChoose(pair: readonly [number, number]): void;
 }) {
   const canvas = useRef<HTMLCanvasElement>(null);
+  const [hovered, setHovered] = useState<readonly [number, number] | null>(null);
   const isDark = useComputedColorScheme("light") === "dark";
   const count = order.length;
   const cell = SIDE / count;
@@ -66,14 +72,14 @@ export function PairMatrix({
     const inside = (value: number) => Math.min(Math.max(value, 0), count - 1);
     onChoose([order[inside(at[0] + step[0]!)]!, order[inside(at[1] + step[1]!)]!]);
   };
-  const point = (event: PointerEvent<HTMLCanvasElement>) => {
+  const pairUnder = (event: PointerEvent<HTMLCanvasElement>): readonly [number, number] => {
     const box = event.currentTarget.getBoundingClientRect();
     const place = (offset: number, size: number) =>
       Math.min(count - 1, Math.max(0, Math.floor((offset / size) * count)));
-    onChoose([
+    return [
       order[place(event.clientY - box.top, box.height)]!,
       order[place(event.clientX - box.left, box.width)]!,
-    ]);
+    ];
   };
   return (
     <figure className={styles.figure}>
@@ -85,14 +91,32 @@ export function PairMatrix({
         aria-label={`Matrix of pairs, sorted by sector; arrow keys move. Now ${label(row)} and ${label(column)}. The figures of the pair stand above.`}
         onKeyDown={move}
       >
-        <canvas ref={canvas} width={SIDE} height={SIDE} className={styles.matrix} onPointerDown={point} />
+        <canvas
+          ref={canvas}
+          width={SIDE}
+          height={SIDE}
+          className={styles.matrix}
+          onPointerDown={(event) => onChoose(pairUnder(event))}
+          onPointerMove={(event) => setHovered(pairUnder(event))}
+          onPointerLeave={() => setHovered(null)}
+        />
+      </div>
+      <div className={styles.under} aria-hidden>
+        {hovered && (
+          <>
+            Under the pointer: {label(hovered[0])}
+            {hovered[0] !== hovered[1] && <> and {label(hovered[1])}</>}, {measure}{" "}
+            <Figure value={values[hovered[0]]?.[hovered[1]] ?? null} unit="percent" /> %
+          </>
+        )}
       </div>
       <figcaption className={styles.legend}>
-        <span>0</span>
         {STEPS.map((share) => (
-          <span key={share} className={styles.step} style={{ opacity: share }} />
+          <span key={share} className={styles.stepped}>
+            <span className={styles.step} style={{ opacity: Math.sqrt(share) }} />
+            {fourDigits(top * share, "percent")} %
+          </span>
         ))}
-        <span>{fourDigits(top, "percent")} %</span>
         <span>the darker, the more; lines part sectors: {sectorsOf(order, names).join(", ")}</span>
       </figcaption>
     </figure>

@@ -3,8 +3,9 @@
 import { Group, SegmentedControl, Select, Text } from "@mantine/core";
 import { useMemo, useState } from "react";
 import { Figure } from "@/app/_ui/Figure";
+import { assetCorrelation } from "@/lib/pricing/assetCorrelation";
 import type { PricingReport } from "@/lib/pricing/report";
-import type { NameInput } from "@/lib/pricing/request";
+import type { PricingRequest } from "@/lib/pricing/request";
 import { PairMatrix } from "./PairMatrix";
 
 type PairReport = NonNullable<PricingReport["pairs"]>;
@@ -16,9 +17,12 @@ const measures: readonly { value: Measure; label: string }[] = [
 ];
 
 /** How every two names default together by maturity: the matrix sorted by sector, one pair exactly. */
-export function Pairs({ pairs, names }: { pairs: PairReport; names: readonly NameInput[] }) {
+export function Pairs({ pairs, of }: { pairs: PairReport; of: PricingRequest }) {
+  const { pool: names, correlation } = of;
   const [measure, setMeasure] = useState<Measure>("jointDefault");
-  const [chosen, setChosen] = useState<readonly [number, number]>([0, Math.min(1, names.length - 1)]);
+  const [kept, setChosen] = useState<readonly [number, number]>([0, 1]);
+  const last = names.length - 1;
+  const chosen = [Math.min(kept[0], last), Math.min(kept[1], last)] as const;
   const order = useMemo(
     () =>
       names
@@ -36,6 +40,7 @@ export function Pairs({ pairs, names }: { pairs: PairReport; names: readonly Nam
   };
   const choices = names.map((_, i) => ({ value: String(i), label: label(i) }));
   const both = pairs.jointDefault[row]?.[column] ?? null;
+  const asset = row === column ? 1 : assetCorrelation(correlation, names[row]!, names[column]!);
   return (
     <>
       <Group align="end">
@@ -66,7 +71,8 @@ export function Pairs({ pairs, names }: { pairs: PairReport; names: readonly Nam
         />
       </Group>
       <Text size="sm" aria-live="polite">
-        {label(row)} {row !== column && <>and {label(column)}</>}:{" "}
+        {label(row)} {row !== column && <>and {label(column)}</>}: asset correlation{" "}
+        <Figure value={asset} unit="percent" /> %,{" "}
         {row === column ? "default probability" : "joint default probability"}{" "}
         <Figure value={both} unit="percent" /> %, event correlation{" "}
         <Figure
@@ -79,6 +85,7 @@ export function Pairs({ pairs, names }: { pairs: PairReport; names: readonly Nam
       </Text>
       <PairMatrix
         names={names}
+        measure={measure === "jointDefault" ? "joint default probability" : "event correlation"}
         order={order}
         values={values}
         chosen={chosen}
