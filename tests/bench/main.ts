@@ -1,10 +1,11 @@
 /**
- * `npm run bench`: Loadline's speed beside yardsticks in the same interleaved run. `-- kernel prices sensitivities server`
+ * `npm run bench`: Loadline's speed beside yardsticks in the same interleaved run. `-- kernel prices drag sensitivities server`
  * runs only the parts named, `--rounds=9` sets the rounds, `--json` prints rows for a machine.
  */
 import { mkdtempSync, rmSync } from "node:fs";
 import { cpus, tmpdir } from "node:os";
 import { join } from "node:path";
+import { dragRows } from "./dragBench";
 import { kernelRows } from "./kernelBench";
 import { priceRows, sensitivityRows } from "./priceBench";
 import { type BenchRow, benchText } from "./report";
@@ -16,6 +17,7 @@ const folder = mkdtempSync(join(tmpdir(), "loadline-bench-"));
 const parts: Record<string, () => Promise<BenchRow[]>> = {
   kernel: () => kernelRows(folder, rounds),
   prices: () => priceRows(rounds),
+  drag: dragRows,
   sensitivities: sensitivityRows,
   server: serverRows,
 };
