@@ -4,6 +4,7 @@ import { Alert, Loader, SimpleGrid, Text, Title } from "@mantine/core";
 import dynamic from "next/dynamic";
 import { useMemo } from "react";
 import { Problems } from "@/app/_ui/Problems";
+import { Takeable } from "@/app/_ui/Takeable";
 import { usePriced } from "@/app/_ui/usePriced";
 import { useDeal } from "../_frame/dealContext";
 import { ArbitrageTable } from "./ArbitrageTable";
@@ -57,7 +58,9 @@ export function Correlation() {
             </Alert>
           )}
           <SimpleGrid cols={{ base: 1, md: 2 }}>
-            <CurveChart base={base} reading={shownOf} classes={report.tranches} />
+            <Takeable name="base correlation">
+              <CurveChart base={base} reading={shownOf} classes={report.tranches} />
+            </Takeable>
             <div>
               <QuotesTable base={base} quotes={"quotes" in shownOf ? shownOf.quotes : []} />
               <ArbitrageTable marks={base.arbitrage} />

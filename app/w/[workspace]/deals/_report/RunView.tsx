@@ -6,6 +6,7 @@ import Link from "next/link";
 import { Figure } from "@/app/_ui/Figure";
 import type { FigureUnit } from "@/app/_ui/figures";
 import { saveFile } from "@/app/_ui/saveFile";
+import { Takeable } from "@/app/_ui/Takeable";
 import type { ClassText } from "@/lib/deals/form";
 import { textOf } from "@/lib/deals/typed";
 import type { Operations } from "@/lib/operations";
@@ -61,6 +62,9 @@ export function RunView({
           </Text>
         </div>
         <Group>
+          <Button component={Link} href={`/w/${workspaceId}/sheet/${run.id}`} variant="default">
+            Deal sheet to print
+          </Button>
           <Button
             variant="default"
             onClick={() =>
@@ -94,22 +98,26 @@ export function RunView({
         ))}
       </SimpleGrid>
       {report.tranches.length > 0 && (
-        <Hull
-          classes={report.tranches.map((tranche) => classText(tranche, nameOf(tranche.id)))}
-          law={report.lossLaw}
-          levels={LEVELS}
-          reach={usualReach(report)}
-          lawView="mass"
-        />
+        <Takeable name="structure and loss law">
+          <Hull
+            classes={report.tranches.map((tranche) => classText(tranche, nameOf(tranche.id)))}
+            law={report.lossLaw}
+            levels={LEVELS}
+            reach={usualReach(report)}
+            lawView="mass"
+          />
+        </Takeable>
       )}
       {report.tranches.length > 0 && (
         <ReportClasses report={report} nameOf={nameOf} currency={request.currency ?? "EUR"} />
       )}
       {report.timeline && report.tranches.length > 0 && (
-        <TimelineChart
-          timeline={report.timeline}
-          names={report.tranches.map((tranche) => nameOf(tranche.id))}
-        />
+        <Takeable name="expected loss over time">
+          <TimelineChart
+            timeline={report.timeline}
+            names={report.tranches.map((tranche) => nameOf(tranche.id))}
+          />
+        </Takeable>
       )}
       {report.nthToDefault.length > 0 && (
         <Table.ScrollContainer minWidth={480}>

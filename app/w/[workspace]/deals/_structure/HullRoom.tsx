@@ -1,6 +1,7 @@
 "use client";
 
 import { Group, SegmentedControl, Text, TextInput } from "@mantine/core";
+import { Takeable } from "@/app/_ui/Takeable";
 import { useAddress } from "@/app/_ui/useAddress";
 import { moveBoundary } from "@/lib/deals/classEdits";
 import { typedNumber } from "@/lib/deals/typed";
@@ -58,18 +59,20 @@ export function HullRoom({ law }: { law: PricingReport["lossLaw"] | undefined })
           />
         </div>
       </Group>
-      <Hull
-        classes={form.classes}
-        law={law}
-        levels={levels}
-        reach={reach}
-        lawView={lawView as LawView}
-        onMove={
-          mayEdit
-            ? (from, to, gesture) => change({ classes: moveBoundary(form.classes, from, to) }, gesture)
-            : undefined
-        }
-      />
+      <Takeable name="structure and loss law">
+        <Hull
+          classes={form.classes}
+          law={law}
+          levels={levels}
+          reach={reach}
+          lawView={lawView as LawView}
+          onMove={
+            mayEdit
+              ? (from, to, gesture) => change({ classes: moveBoundary(form.classes, from, to) }, gesture)
+              : undefined
+          }
+        />
+      </Takeable>
     </div>
   );
 }
