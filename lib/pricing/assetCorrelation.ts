@@ -1,8 +1,8 @@
 import type { CorrelationInput } from "./request";
 
 interface Correlated {
-  readonly loading?: number | null;
-  readonly sector?: string | null;
+  readonly loading?: number | null | undefined;
+  readonly sector?: string | null | undefined;
 }
 
 /** The correlation of two names' asset values; that of their defaults is another figure, and lower. Null under a base curve. */
