@@ -1,12 +1,12 @@
 import { parSpread, swapLegs } from "../quant/market/defaultSwap";
 import { bumpedName } from "./bumps";
+import type { NameDifference } from "./namesAtOnce";
 import type { PricingProblem } from "./problem";
 import { checkRequest } from "./refusals";
 import type { PricingRequest } from "./request";
 import { values, withCoupons } from "./revaluation";
 import {
   marketDifferences,
-  type NameDifference,
   namesDifferences,
   scaledDifference,
   spreadDifference,

@@ -3,6 +3,7 @@ import { shiftZeroRates } from "../quant/market/discountCurve";
 import { defaultedName } from "../quant/market/survivalCurve";
 import type { PortfolioName } from "../quant/portfolio/portfolio";
 import { bumpedName, type NameBump } from "./bumps";
+import { type NameDifference, namesAtOnce } from "./namesAtOnce";
 import type { SensitivityReport } from "./report";
 import { type Difference, differenceFrom, revalued, values, withCoupons } from "./revaluation";
 import { type Valuation, valuationOf } from "./valuation";
@@ -99,21 +100,23 @@ function nextDay({ request }: Valuation): Valuation | null {
   return valuationOf({ ...request, pricingDate: formatDay(tomorrow) }, []);
 }
 
-/** What one name does to every tranche. */
-export interface NameDifference {
-  readonly id: string;
-  readonly spread01: (number | null)[];
-  readonly jumpToDefault: (number | null)[];
-}
-
 /**
- * Name by name, of all names or of those at the places given; names alike in everything but their id are valued once. Names
- * already in default have none.
+ * Name by name, of all names or of those at the places given: all at once where that is exact, else one by one. Names already in
+ * default have none.
  */
 export function namesDifferences(
   valuation: Valuation,
   today: readonly (number | null)[],
   places: readonly number[] = valuation.names.map((_, i) => i),
+): NameDifference[] {
+  return namesAtOnce(valuation, today, places) ?? namesOneByOne(valuation, today, places);
+}
+
+/** The same by full valuations, two a name; names alike in everything but their id are valued once. */
+export function namesOneByOne(
+  valuation: Valuation,
+  today: readonly (number | null)[],
+  places: readonly number[],
 ): NameDifference[] {
   const { request, names, market } = valuation;
   const difference = differenceFrom(today);

@@ -3,7 +3,8 @@ import { type AmountGrid, amountGrid, exactUnit } from "./amountGrid";
 import { atomic, certainlyNothing } from "./atomicDistribution";
 import { comonotonicLaw } from "./comonotonicLaw";
 import type { Distribution } from "./distributionQuestions";
-import { type Asked, factorDistribution, WHOLE } from "./factorDistribution";
+import { type Asked, FEWEST_FOR_MOMENTS, factorDistribution, WHOLE } from "./factorDistribution";
+import type { FactorNames } from "./factorNames";
 import { type LargePool, largePoolDistribution } from "./largePool";
 import { oneFactorLaw } from "./oneFactorLaw";
 import type { Portfolio } from "./portfolio";
@@ -118,6 +119,22 @@ export class PoolLaws {
       minimumOnly: true,
     };
     return this.make("loss", j, dependence, asked).minima(strikes);
+  }
+
+  /** Grid and factor model of the loss at date j; null where the law is not a one-factor recursion on a grid. */
+  recursionAt(
+    j: number,
+    dependence: Dependence,
+  ): { readonly grid: AmountGrid; readonly names: FactorNames } | null {
+    if (this.law.kind === "largePool" || dependence.kind === "sector") return null;
+    if (dependence.kind === "flat" && dependence.rho > COMONOTONIC) return null;
+    const grid = this.gridOf("loss", 3);
+    const isByMoments = this.mayTakeMoments && this.portfolio.live.length >= FEWEST_FOR_MOMENTS;
+    if (grid === null || (isByMoments && !grid.isExact)) return null;
+    return {
+      grid,
+      names: { thresholds: this.portfolio.thresholds[j]!, loadings: this.loadingsOf(dependence) },
+    };
   }
 
   private keptLaw(key: string, make: () => Distribution): Distribution {

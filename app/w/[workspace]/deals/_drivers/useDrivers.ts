@@ -3,9 +3,10 @@
 import { useMemo } from "react";
 import { usePieces } from "@/app/_ui/usePieces";
 import type { MarketDriver } from "@/lib/pricing/drivers";
+import { isTakenAtOnce } from "@/lib/pricing/namesAtOnce";
 import type { PricingRequest } from "@/lib/pricing/request";
 
-/** Names worked out in one piece: few enough that progress shows and a stop is quick. */
+/** Names worked out in one piece where each is a valuation of its own: few enough that progress shows and a stop is quick. */
 const NAMES_A_PIECE = 4;
 
 /** What drives the classes of a request, worked out in this browser: the market's inputs first, names as they come. */
@@ -14,9 +15,10 @@ export function useDrivers(request: PricingRequest | null) {
     if (!request || request.tranches.length === 0) return null;
     const bare = { ...request, nthToDefault: [], include: [] };
     const places = widestFirst(request);
-    const pieces = Array.from({ length: Math.ceil(places.length / NAMES_A_PIECE) }, (_, i) => ({
+    const size = isTakenAtOnce(bare) ? places.length : NAMES_A_PIECE;
+    const pieces = Array.from({ length: Math.ceil(places.length / size) }, (_, i) => ({
       request: bare,
-      places: places.slice(i * NAMES_A_PIECE, (i + 1) * NAMES_A_PIECE),
+      places: places.slice(i * size, (i + 1) * size),
     }));
     return { key: JSON.stringify(bare), bare, pieces };
   }, [request]);
