@@ -58,7 +58,7 @@ function aRequest(isMixed: boolean, correlation: PricingRequest["correlation"]):
     pool: aPool(isMixed),
     correlation,
     // An imposed unit keeps the mixed pool's grid coarse: both ways of working stand on the same one.
-    law: isMixed ? { kind: "finite", unit: 0.002 } : { kind: "finite" },
+    law: isMixed ? { kind: "finite", unit: 0.0002 } : { kind: "finite" },
     tranches: boundaries.slice(1).map((detachment, i) => ({
       id: `class ${i + 1}`,
       attachment: boundaries[i]!,
