@@ -4,7 +4,7 @@ import styles from "../_structure/hull/hull.module.css";
 import { Planks } from "../_structure/hull/Planks";
 
 const HEIGHT = 260;
-const WIDTH = 250;
+const WIDTH = 290;
 const AXIS = 40;
 
 /** A structure to scale, small: to be laid beside others of the same height. */
