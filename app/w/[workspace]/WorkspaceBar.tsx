@@ -5,6 +5,7 @@ import Link from "next/link";
 import { usePathname, useRouter } from "next/navigation";
 import { askAccounts } from "@/app/_ui/accounts";
 import classes from "./bar.module.css";
+import { Palette } from "./Palette";
 
 const rooms = ["deals", "pools", "markets", "people", "activity"] as const;
 
@@ -53,6 +54,7 @@ export function WorkspaceBar({
           ))}
         </Group>
         <Group gap="sm">
+          <Palette workspaceId={workspaceId} />
           <Link
             href={`/w/${workspaceId}/inbox`}
             className={classes.room}

@@ -1,6 +1,7 @@
 "use client";
 
 import { Button, Group, Menu, Stack, TextInput } from "@mantine/core";
+import { useHotkeys } from "@mantine/hooks";
 import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { call } from "@/app/_ui/call";
@@ -24,6 +25,16 @@ export function DealActions() {
   const [refused, setRefused] = useState<Refused | null>(null);
   const [isPricing, setPricing] = useState(false);
   const maySave = reading.ok && !isBehind && (isDirty || deal === null);
+
+  useHotkeys(
+    mayEdit
+      ? [
+          ["mod+Z", draft.undo],
+          ["mod+shift+Z", draft.redo],
+        ]
+      : [],
+  );
+  useHotkeys(mayEdit ? [["mod+S", () => void (maySave && save())]] : [], []);
 
   const price = async () => {
     if (!deal) return;
