@@ -1,46 +1,22 @@
 /** `npm run --silent price -- request.json | requests.jsonl | -`: requests in, reports out, no database. */
+import { once } from "node:events";
 import { createReadStream, readFileSync } from "node:fs";
 import { createInterface } from "node:readline";
-import { price } from "../price";
-import type { PricingProblem } from "../problem";
-
-type Line = { readonly report: string } | { readonly errors: readonly { path: string; message: string }[] };
-
-function priced(text: string): Line {
-  let raw: unknown;
-  try {
-    raw = JSON.parse(text);
-  } catch (error) {
-    return {
-      errors: [{ path: "", message: `This is not JSON: ${error instanceof Error ? error.message : error}.` }],
-    };
-  }
-  const outcome = price(raw);
-  return outcome.ok
-    ? { report: JSON.stringify(outcome.report) }
-    : { errors: outcome.problems.map(pathAndMessage) };
-}
-
-function pathAndMessage({ path, message }: PricingProblem): { path: string; message: string } {
-  return { path, message };
-}
+import { pricedHere, pricedLines } from "./lines";
 
 async function priceLines(file: string): Promise<number> {
   let code = 0;
-  for await (const text of createInterface({
-    input: createReadStream(file),
-    crlfDelay: Number.POSITIVE_INFINITY,
-  })) {
-    if (text.trim() === "") continue;
-    const line = priced(text);
+  const texts = createInterface({ input: createReadStream(file), crlfDelay: Number.POSITIVE_INFINITY });
+  for await (const line of pricedLines(texts)) {
     if ("errors" in line) code = 2;
-    process.stdout.write(`${"report" in line ? line.report : JSON.stringify(line)}\n`);
+    const isWritten = process.stdout.write(`${"report" in line ? line.report : JSON.stringify(line)}\n`);
+    if (!isWritten) await once(process.stdout, "drain");
   }
   return code;
 }
 
 function priceOne(text: string): number {
-  const line = priced(text);
+  const line = pricedHere(text);
   if ("errors" in line) {
     process.stderr.write(`${JSON.stringify(line)}\n`);
     return 2;
