@@ -181,6 +181,26 @@ describe("TYPES: request and report", () => {
   it("are what the contract says", () => {
     expectTypeOf<PricingRequest["format"]>().toEqualTypeOf<1>();
     expectTypeOf<PricingRequest["pool"][number]["notional"]>().toBeNumber();
+    expectTypeOf<PricingRequest["correlation"]["kind"]>().toEqualTypeOf<
+      "flat" | "loadings" | "sector" | "base"
+    >();
+    expectTypeOf<PricingRequest["pool"][number]["credit"]["kind"]>().toEqualTypeOf<
+      "hazard" | "yearly" | "cumulative" | "spread" | "upfront" | "defaulted"
+    >();
+    expectTypeOf<PricingRequest["schedule"]["kind"]>().toEqualTypeOf<"even" | "standard">();
+    expectTypeOf<PricingRequest["discount"]["kind"]>().toEqualTypeOf<"flat" | "zero" | "par">();
+    expectTypeOf<NonNullable<PricingRequest["include"]>[number]>().toEqualTypeOf<
+      "lossLaw" | "timeline" | "impliedCorrelation" | "sensitivities" | "pairs" | "audit"
+    >();
     expectTypeOf<PricingReport["tranches"][number]["parSpread"]>().toEqualTypeOf<number | null>();
+    expectTypeOf<PricingReport["numericalError"]>().toEqualTypeOf<number>();
+    expectTypeOf<PricingReport["pool"]["unit"]>().toEqualTypeOf<number | null>();
+    expectTypeOf<PricingReport["nthToDefault"][number]>().toEqualTypeOf<{
+      n: number;
+      probability: number;
+      protectionLeg: number;
+      annuity: number;
+      parSpread: number | null;
+    }>();
   });
 });

@@ -24,6 +24,7 @@ export function atomic(law: AmountLaw): Distribution {
     from: (strike) => probabilityFrom(law, strike),
     isAtom: (strike) => isAtom(law, strike),
     atoms: law,
+    isContinuous: false,
     quantile: (level) => atomicQuantile(law, level),
     error: law.error,
   };

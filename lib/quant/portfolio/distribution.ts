@@ -92,6 +92,24 @@ export class PoolLaws {
     return found;
   }
 
+  /**
+   * The unit that amounts share under a dependence, null where the law needs no shared grid: lattices, sets of defaults,
+   * comonotonic names, the large pool. (Few names without a lattice are enumerated under one factor, not under sectors.)
+   */
+  sharedUnit(dependence: Dependence): number | null {
+    if (this.law.kind === "largePool" || this.portfolio.live.length === 0) return null;
+    if (dependence.kind === "flat" && dependence.rho > COMONOTONIC) return null;
+    if (dependence.kind === "sector" && dependence.between >= 1) return null;
+    const own = this.gridOf("loss", 3);
+    const grid = own ?? (dependence.kind === "sector" ? amountGrid(this.amountsOf("loss"), 3) : null);
+    return grid && !grid.isExact ? grid.unit : null;
+  }
+
+  /** The same pool on a grid of this unit, with laws of its own. */
+  onUnit(unit: number): PoolLaws {
+    return new PoolLaws(this.portfolio, { kind: "finite", unit }, this.strikes);
+  }
+
   /** The same pool with laws of its own, to be dropped after use: a search over correlations keeps nothing. */
   forOneDependence(): PoolLaws {
     const copy = new PoolLaws(this.portfolio, this.law, this.strikes);

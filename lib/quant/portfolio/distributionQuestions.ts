@@ -14,6 +14,8 @@ export interface Distribution {
   isAtom(strike: number): boolean;
   /** The atoms, or null for a law without (the large pool). */
   readonly atoms: AmountLaw | null;
+  /** Whether no grid was used: the large pool, or a large pool's cumulants. */
+  readonly isContinuous: boolean;
   /** Smallest amount x with P(X ≤ x) ≥ level. */
   quantile(level: number): number;
   /** Bound on the error of E[min(X, K)] from quadrature. */

@@ -87,6 +87,9 @@ export function factorDistribution(
     get atoms() {
       return onGrid().atoms;
     },
+    get isContinuous() {
+      return cut().isContinuous;
+    },
     get error() {
       return cut().error;
     },

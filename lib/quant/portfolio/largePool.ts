@@ -101,6 +101,7 @@ export function largePoolDistribution(pool: LargePool): Distribution {
     from: (strike) => largePoolFrom(pool, strike),
     isAtom: () => false,
     atoms: null,
+    isContinuous: true,
     quantile: (level) => largePoolQuantile(pool, level),
     error: 1e-15,
   };

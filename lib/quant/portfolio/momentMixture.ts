@@ -83,6 +83,7 @@ export function momentLaw(
       above: probability,
       from: probability,
       isAtom: () => false,
+      isContinuous: true,
       quantile: (level) => quantile(probability, level, amounts),
       error,
     },

@@ -1,5 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { price } from "@/lib/pricing/price";
+import { checkRequest } from "@/lib/pricing/refusals";
+import { valuationOf } from "@/lib/pricing/valuation";
 import { normalQuantile } from "@/lib/quant/maths/normal";
 
 interface Name {
@@ -47,6 +49,10 @@ function enumeratedEquityLoss(names: readonly Name[], rho: number, strike: numbe
 }
 
 function pricedEquityLosses(names: readonly Name[], rho: number, strikes: readonly number[]): number[] {
+  return priced(names, rho, strikes).tranches.map((tranche) => tranche.expectedLoss!);
+}
+
+function priced(names: readonly Name[], rho: number, strikes: readonly number[], unit?: number) {
   const outcome = price({
     format: 1,
     schedule: { kind: "even", years: 1, perYear: 1 },
@@ -65,9 +71,10 @@ function pricedEquityLosses(names: readonly Name[], rho: number, strikes: readon
       running: 0.01,
       upfront: 0,
     })),
+    ...(unit === undefined ? {} : { law: { kind: "finite", unit } }),
   });
   if (!outcome.ok) throw new Error(outcome.problems.map((problem) => problem.message).join(" "));
-  return outcome.report.tranches.map((tranche) => tranche.expectedLoss!);
+  return outcome.report;
 }
 
 const strikes = [0.003, 0.0713, 0.3, 0.777];
@@ -112,7 +119,7 @@ describe("LAW: against every set of defaults and a trapezoid rule (independent i
   });
 });
 
-describe("LAW: the stated numerical error", () => {
+describe("ERROR: the stated numerical error", () => {
   it("covers a shared grid even at strikes that the pool's losses reach exactly: 14 names against a finer grid", () => {
     const losses = Array.from({ length: 14 }, (_, i) => 1 + ((i * 31) % 17) / 7.003 + i * 0.0137);
     const total = losses.reduce((sum, loss) => sum + loss, 0);
@@ -150,5 +157,53 @@ describe("LAW: the stated numerical error", () => {
       expect(error).toBeLessThanOrEqual(coarse.numericalError + fine.numericalError);
     }
     expect(coarse.numericalError).toBeLessThanOrEqual(5.3e-4 / 4 + 1e-9);
+  });
+
+  it("covers, at most 2,000 times too widely, what grids of 1e-4 to 1e-2 do to eight names: every set of defaults, strikes on sums", () => {
+    const losses = [1, 2.137, 3.551, 1.777, 2.903, 1.271, 3.009, 2.417];
+    const total = losses.reduce((sum, loss) => sum + loss, 0);
+    const names: Name[] = losses.map((notional, i) => ({
+      notional,
+      recovery: 0,
+      probability: [0.3, 0.01, 0.1][i % 3]!,
+    }));
+    const sums = [losses[1]!, losses[0]! + losses[4]!, losses[2]! + losses[5]! + losses[6]!];
+    const strikes = [0.03, ...sums.map((sum) => sum / total)];
+    for (const rho of [0.1, 0.6]) {
+      const exact = strikes.map((strike) => enumeratedEquityLoss(names, rho, strike));
+      for (const unit of [1e-2, 1.7e-3, 1e-4]) {
+        const { tranches, numericalError } = priced(names, rho, strikes, unit);
+        const error = Math.max(
+          ...strikes.map((strike, i) => strike * Math.abs(tranches[i]!.expectedLoss! - exact[i]!)),
+        );
+        expect(error).toBeLessThanOrEqual(numericalError);
+        expect(numericalError).toBeLessThanOrEqual(2000 * error);
+      }
+    }
+  });
+
+  it("is rounding for a lattice, and for names whose sets of defaults are enumerated", () => {
+    expect(priced(even, 0.3, strikes).numericalError).toBeLessThanOrEqual(1e-9);
+    expect(priced(dominated, 0.3, strikes).numericalError).toBeLessThanOrEqual(1e-9);
+  });
+
+  it("counts the grid that a sector model lays where one factor would enumerate", () => {
+    const checked = checkRequest({
+      format: 1,
+      schedule: { kind: "even", years: 1, perYear: 1 },
+      discount: { kind: "flat", rate: 0 },
+      pool: dominated.map(({ notional, recovery, probability }, i) => ({
+        id: `N${i}`,
+        notional,
+        recovery,
+        credit: { kind: "yearly", probability },
+      })),
+      correlation: { kind: "flat", rho: 0.3 },
+      tranches: [{ id: "T", attachment: 0, detachment: 0.3 }],
+    });
+    const { laws } = valuationOf((checked as Extract<typeof checked, { ok: true }>).request, [])!;
+    expect(laws.sharedUnit({ kind: "flat", rho: 0.3 })).toBeNull();
+    expect(laws.sharedUnit({ kind: "sector", within: 0.4, between: 0.2 })).toBeGreaterThan(0);
+    expect(laws.sharedUnit({ kind: "sector", within: 1, between: 1 })).toBeNull();
   });
 });
