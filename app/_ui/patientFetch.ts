@@ -10,7 +10,7 @@ export function makePageFetchesPatient(): void {
   const patient: typeof plain = async (input, init) => {
     if (!isPageData(init)) return plain(input, init);
     for (;;) {
-      const answer = await plain(input, init).catch((error: unknown) => {
+      const answer = await whole(plain(input, init)).catch((error: unknown) => {
         if (init?.signal?.aborted) throw error;
         return null;
       });
@@ -20,6 +20,17 @@ export function makePageFetchesPatient(): void {
   };
   patient.isPatient = true;
   window.fetch = patient;
+}
+
+/** An answer once all of it has come: one that breaks off half-way counts as none. */
+async function whole(coming: Promise<Response>): Promise<Response> {
+  const answer = await coming;
+  const { status, statusText, headers, url, redirected } = answer;
+  const hasBody = ![101, 204, 205, 304].includes(status);
+  const body = hasBody ? await answer.arrayBuffer() : null;
+  const complete = new Response(body, { status, statusText, headers });
+  Object.defineProperties(complete, { url: { value: url }, redirected: { value: redirected } });
+  return complete;
 }
 
 function isPageData(init: RequestInit | undefined): boolean {

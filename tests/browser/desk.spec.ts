@@ -37,53 +37,6 @@ test("a boundary is dragged and moved by keys, figures follow, a change is undon
   await expectAccessible(page);
 });
 
-test("a market quotes a pool's tranches; a deal takes its base curve, sees it drawn, and its implied correlations", async ({
-  page,
-  desk,
-}) => {
-  const { address, marketId, dealId } = await aStoredDeal(desk);
-  const { report } = await runOf(desk, dealId);
-  const quotes = report.tranches
-    .map(({ attachment, detachment, upfrontAtRunning }) =>
-      [
-        "2031-12-20",
-        attachment * 100,
-        detachment * 100,
-        attachment === 0 ? 500 : 100,
-        upfrontAtRunning * 100,
-      ].join("\t"),
-    )
-    .join("\n");
-  await page.goto(`/w/${desk.workspaceId}/markets/${marketId}`);
-  await page.getByRole("button", { name: "Add a quoted pool" }).click();
-  await page.getByLabel("Name of the quotes").fill("Dozen quotes");
-  await page.getByLabel("Quotes, one a line").fill("2031-12-20 0 10 500");
-  await expect(page.getByText("Line 1 has 4 cells")).toBeVisible();
-  await page.getByLabel("Quotes, one a line").fill(quotes);
-  await page.getByRole("button", { name: "Save", exact: true }).click();
-  await expect(page.getByText("Everything is saved.")).toBeVisible();
-
-  await page.goto(`${address}/correlation`);
-  await page.getByLabel("How names default together").selectOption("market");
-  await expect(page.getByText(/Base correlation \(%\) by strike/)).toBeVisible({ timeout: 60_000 });
-  const curve = page.getByRole("table").filter({ hasText: "Base correlation" }).first();
-  await expect(curve.getByRole("row").nth(1)).toContainText("30");
-  const implied = page.getByRole("row", { name: /Keel/ });
-  await expect(implied).toContainText(/One solution|solutions/);
-  await page.getByRole("button", { name: "Save", exact: true }).click();
-  await expect(page.getByText("Version 2 is saved")).toBeVisible();
-});
-
-async function runOf(
-  desk: { call(name: string, input: Record<string, unknown>): Promise<Record<string, unknown>> },
-  dealId: unknown,
-) {
-  const { runId } = await desk.call("runs.price", { dealId, version: 1, note: "" });
-  return (await desk.call("runs.open", { runId })) as {
-    report: { tranches: { attachment: number; detachment: number; upfrontAtRunning: number }[] };
-  };
-}
-
 test("names are edited like a spreadsheet; a default and a substitution show each class's move before anything is saved", async ({
   page,
   desk,

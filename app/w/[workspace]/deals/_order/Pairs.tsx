@@ -1,6 +1,6 @@
 "use client";
 
-import { Group, SegmentedControl, Select, Text } from "@mantine/core";
+import { Group, NativeSelect, Select, Text } from "@mantine/core";
 import { useMemo, useState } from "react";
 import { Figure } from "@/app/_ui/Figure";
 import { assetCorrelation } from "@/lib/pricing/assetCorrelation";
@@ -44,12 +44,12 @@ export function Pairs({ pairs, of }: { pairs: PairReport; of: PricingRequest }) 
   return (
     <>
       <Group align="end">
-        <SegmentedControl
+        <NativeSelect
           size="xs"
-          aria-label="What the matrix shows"
+          label="What the matrix shows"
           data={[...measures]}
           value={measure}
-          onChange={(value) => setMeasure(value as Measure)}
+          onChange={(event) => setMeasure(event.currentTarget.value as Measure)}
         />
         <Select
           size="xs"

@@ -1,6 +1,6 @@
 "use client";
 
-import { type KeyboardEvent, memo, useRef, useState } from "react";
+import { type KeyboardEvent, memo, useLayoutEffect, useRef, useState } from "react";
 import { fourDigits } from "@/app/_ui/figures";
 import type { DraftRow, TypedCell } from "@/lib/pools/draft";
 import { cellText, type GridColumn, valueIn } from "@/lib/pools/grid";
@@ -93,6 +93,11 @@ function GridCell({
   const [isTyping, setTyping] = useState(false);
   const [isEditing, setEditing] = useState(false);
   const before = useRef("");
+  const input = useRef<HTMLInputElement>(null);
+  // What is focused is chosen as a whole, at once, so that the first key typed replaces it.
+  useLayoutEffect(() => {
+    if (isTyping) input.current?.select();
+  }, [isTyping]);
   const isText = textFields.includes(column.field);
   const source = row.name ?? row.saved;
   const typed = row.typed[column.key];
@@ -118,17 +123,16 @@ function GridCell({
       title={reason ? `${full || "Empty"}: ${reason}` : full}
     >
       <input
+        ref={input}
         aria-label={label}
         aria-invalid={reason !== null}
         data-place={`${place.row}:${place.column}`}
         inputMode={isText ? "text" : "decimal"}
         value={isTyping ? (typed ?? full) : short}
-        onFocus={(event) => {
+        onFocus={() => {
           setTyping(true);
           before.current = typed ?? full;
           events.focus(place);
-          const input = event.currentTarget;
-          requestAnimationFrame(() => input.select());
         }}
         onBlur={() => {
           setTyping(false);
@@ -147,8 +151,8 @@ function GridCell({
           } else if (event.key === "Escape" && isEditing) {
             edits.type([{ row, column, text: before.current }]);
             setEditing(false);
-            const input = event.currentTarget;
-            requestAnimationFrame(() => input.select());
+            const field = event.currentTarget;
+            requestAnimationFrame(() => field.select());
           } else if (!events.key(event, place, isEditing)) return;
           event.preventDefault();
         }}
