@@ -8,6 +8,10 @@ interface Asked {
   readonly resolve: (answer: TaskAnswer | null) => void;
 }
 
+/** How often a worker that failed before answering is opened again, and after how many milliseconds at first. */
+const MOST_FAILURES = 4;
+const RETRY = 400;
+
 /**
  * One line to the engine in this browser, with a worker of its own. The latest task wins: one that waits is dropped for a
  * newer one, one that runs long is given up.
@@ -18,6 +22,7 @@ export class EngineLine {
   private waiting: Asked | null = null;
   private timer: ReturnType<typeof setTimeout> | null = null;
   private count = 0;
+  private failures = 0;
 
   /**
    * Runs a task; null when a newer task superseded it.
@@ -65,16 +70,31 @@ export class EngineLine {
   private open(): Worker {
     const worker = new Worker(new URL("./browserWorker.ts", import.meta.url), { type: "module" });
     worker.onmessage = ({ data }: MessageEvent<TaskAnswer>) => {
+      this.failures = 0;
       if (data.id !== this.running?.message.id) return;
       this.finish(data);
     };
     worker.onerror = ({ message }) => {
-      const id = this.running?.message.id ?? 0;
-      this.worker?.terminate();
+      if (worker !== this.worker) return;
+      worker.terminate();
       this.worker = null;
+      this.failures += 1;
+      const task = this.running?.message;
+      if (this.failures <= MOST_FAILURES && task) {
+        setTimeout(() => this.again(task), RETRY * this.failures);
+        return;
+      }
+      const id = task?.id ?? 0;
       this.finish({ id, ok: false, message: message || "The engine in this browser could not be loaded." });
     };
     return worker;
+  }
+
+  /** A worker whose script did not come, over a lost connection say, is opened again for the task at hand. */
+  private again(task: TaskMessage): void {
+    if (this.running?.message !== task) return;
+    this.worker ??= this.open();
+    this.worker.postMessage(task);
   }
 
   private finish(answer: TaskAnswer): void {

@@ -77,7 +77,7 @@ for (const mode of ["embedded", "server"] as const) {
         acknowledged = i;
       }
     })();
-    await expect.poll(() => acknowledged).toBeGreaterThan(15);
+    await expect.poll(() => acknowledged, { timeout: 60_000 }).toBeGreaterThan(15);
     await app.kill("SIGKILL");
     await writing;
     await expect(page.getByText("The connection to the server is lost")).toBeVisible();
