@@ -89,7 +89,7 @@ test("a structurer imports a pool, sets classes, prices and saves a run; an anal
   await structurer.getByRole("button", { name: "Price version 1" }).click();
   await expect(structurer.getByRole("heading", { name: "Run 1" })).toBeVisible({ timeout: 60_000 });
   await expect(structurer.getByRole("row", { name: /Keel/ })).toBeVisible();
-  await expect(structurer.getByText(/Loss law at maturity/)).toBeVisible();
+  await expect(structurer.getByText("Probability of the loss")).toBeVisible();
   await expect(structurer.getByText(/Expected loss \(% of each/)).toBeVisible();
   const run = structurer.url();
   await look(structurer, "run");
