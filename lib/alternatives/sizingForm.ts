@@ -1,6 +1,6 @@
 import type { ClassText } from "../deals/form";
-import { textOf, typedNumber } from "../deals/typed";
 import type { Problem } from "../platform/errors";
+import { scaled, textOf, typedNumber } from "../platform/typed";
 import type { LimitKind, SizedClass, SizingTarget } from "../pricing/sizing";
 
 /** A class to be sized, as typed: limits in percent and basis points. */
@@ -86,7 +86,7 @@ export function readSizing(form: SizingForm): SizingReading {
         value: text,
         message: `${what} must be a number of 0 or more (it is "${text}").`,
       });
-    return typeof value === "number" ? Number((value / by).toPrecision(15)) : undefined;
+    return typeof value === "number" ? scaled(value, by) : undefined;
   };
   const top = number(form.top, 100, "top", "The highest detachment") ?? 1;
   const step = number(form.step, 100, "step", "The rounding of boundaries") ?? 0.0001;

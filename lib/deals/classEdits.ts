@@ -1,5 +1,5 @@
+import { textOf, typedNumber } from "../platform/typed";
 import type { ClassText } from "./form";
-import { textOf, typedNumber } from "./typed";
 
 /** Two strikes this close, in percent of the pool, are one boundary. */
 const TOUCHING = 1e-9;

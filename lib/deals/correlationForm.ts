@@ -1,5 +1,5 @@
+import { type NumberReader, scaled, textOf, typedNumber } from "../platform/typed";
 import type { DealCorrelation } from "./schema";
-import { type NumberReader, textOf, typedNumber } from "./typed";
 
 /** The choice of correlation as typed. Every kind keeps its own text, so that changing one's mind loses nothing. */
 export interface CorrelationText {
@@ -101,7 +101,7 @@ function readNodes(text: string, numbers: NumberReader): { strike: number; rho: 
       .filter((cell) => cell !== "" && cell !== "%");
     const [strike, rho] = cells.map(typedNumber);
     if (cells.length === 2 && typeof strike === "number" && typeof rho === "number")
-      return [{ strike: Number((strike / 100).toPrecision(15)), rho: Number((rho / 100).toPrecision(15)) }];
+      return [{ strike: scaled(strike, 100), rho: scaled(rho, 100) }];
     numbers.problems.push({
       code: "number",
       path,

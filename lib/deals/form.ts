@@ -1,7 +1,7 @@
 import type { Problem } from "../platform/errors";
+import { NumberReader, textOf } from "../platform/typed";
 import { type CorrelationText, correlationText, readCorrelation } from "./correlationForm";
 import { type DealClass, type DealContent, dealContent } from "./schema";
-import { NumberReader, textOf } from "./typed";
 
 /** A class as typed: percent of the pool, basis points of coupon, percent of upfront. */
 export interface ClassText {

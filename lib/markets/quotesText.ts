@@ -1,3 +1,4 @@
+import { scaled, textOf } from "../platform/typed";
 import type { QuotedMaturity } from "./schema";
 
 /** Cells of a quote, in order: maturity, attachment, detachment, coupon, upfront. */
@@ -86,10 +87,10 @@ export function quotesText(maturities: readonly QuotedMaturity[]): string {
       quotes.map(({ attachment, detachment, running, upfront }) =>
         [
           maturity ?? years,
-          shown(attachment, 100),
-          shown(detachment, 100),
-          shown(running, 10_000),
-          shown(upfront, 100),
+          textOf(attachment, 100),
+          textOf(detachment, 100),
+          textOf(running, 10_000),
+          textOf(upfront, 100),
         ].join("\t"),
       ),
     )
@@ -119,12 +120,4 @@ function decimal(text: string): number {
     .replace(/\s*(%|bp)$/, "")
     .replace(",", ".");
   return /^[+-]?(\d+\.?\d*|\.\d+)$/.test(plain) ? Number(plain) : Number.NaN;
-}
-
-function scaled(value: number, by: number): number {
-  return Number((value / by).toPrecision(15));
-}
-
-function shown(value: number, by: number): string {
-  return String(Number((value * by).toPrecision(15)));
 }

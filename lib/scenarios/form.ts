@@ -1,5 +1,5 @@
-import { typedNumber } from "../deals/typed";
 import type { Problem } from "../platform/errors";
+import { scaled, typedNumber } from "../platform/typed";
 import { noShock, type Shock } from "../pricing/shock";
 
 /** A shock as typed: percent, basis points and points of a percent. */
@@ -60,7 +60,7 @@ export function readShock(form: ShockForm): ShockReading {
         value: text,
         message: `${what} must be ${least} or more (it is ${text}).`,
       });
-    return decimal(value, by);
+    return scaled(value, by);
   };
   const wider = number(form.wider, 100, "wider", "How much wider spreads are", -100);
   const shift = number(form.shift, 10_000, "shift", "The spread shift", -10_000);
@@ -85,7 +85,7 @@ export function readShock(form: ShockForm): ShockReading {
       : { kind: "names" as const, ids: form.defaults === "names" ? [...form.names] : [] };
   return {
     ok: true,
-    shock: { scale: decimal(1 + wider, 1), shift, correlation, recovery, sectors, defaults },
+    shock: { scale: scaled(1 + wider, 1), shift, correlation, recovery, sectors, defaults },
   };
 }
 
@@ -118,7 +118,7 @@ export function readSteps(text: string, by: number): number[] | null {
   const parts = text.split(/[\s;]+/).filter((part) => part !== "");
   const numbers = parts.map((part) => typedNumber(signed(part.replace(/,$/, ""))));
   if (numbers.some((value) => typeof value !== "number")) return null;
-  return numbers.map((value) => decimal(value as number, by));
+  return numbers.map((value) => scaled(value as number, by));
 }
 
 /** A shock in words, for a list of scenarios. */
@@ -149,10 +149,6 @@ export function shockWords(shock: Shock): string {
 /** A true minus or a plus sign in front is as good as a hyphen or none. */
 function signed(text: string): string {
   return text.trim().replace(/^[−–]/, "-").replace(/^\+/, "");
-}
-
-function decimal(value: number, by: number): number {
-  return Number((value / by).toPrecision(15));
 }
 
 function textFrom(value: number, by: number): string {

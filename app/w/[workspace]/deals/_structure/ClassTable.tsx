@@ -7,7 +7,7 @@ import type { FigureColumn } from "@/app/_ui/table/figureColumns";
 import { useKept } from "@/app/_ui/useKept";
 import { withClass } from "@/lib/deals/classEdits";
 import type { ClassText } from "@/lib/deals/form";
-import { typedNumber } from "@/lib/deals/typed";
+import { scaled, typedNumber } from "@/lib/platform/typed";
 import type { TrancheReport } from "@/lib/pricing/report";
 import { useDeal } from "../_frame/dealContext";
 import { hiddenTrancheColumns, type LossesIn, lossesIn, trancheColumns } from "../_report/trancheColumns";
@@ -40,7 +40,7 @@ function typedColumn<Field extends TypedField>(
 ) {
   const value = ({ typed }: ClassRow) => {
     const read = typedNumber(typed[key]);
-    return typeof read === "number" ? Number((read / by).toPrecision(15)) : typed[key] || null;
+    return typeof read === "number" ? scaled(read, by) : typed[key] || null;
   };
   return { key, header, unit, unitWords, value };
 }

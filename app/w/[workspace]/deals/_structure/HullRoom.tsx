@@ -4,7 +4,7 @@ import { Group, SegmentedControl, Text, TextInput } from "@mantine/core";
 import { Takeable } from "@/app/_ui/Takeable";
 import { useAddress } from "@/app/_ui/useAddress";
 import { moveBoundary } from "@/lib/deals/classEdits";
-import { typedNumber } from "@/lib/deals/typed";
+import { typedNumber } from "@/lib/platform/typed";
 import type { PricingReport } from "@/lib/pricing/report";
 import { useDeal } from "../_frame/dealContext";
 import { Hull } from "./hull/Hull";

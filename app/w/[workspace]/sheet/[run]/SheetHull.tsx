@@ -1,6 +1,6 @@
 "use client";
 
-import { textOf } from "@/lib/deals/typed";
+import { textOf } from "@/lib/platform/typed";
 import type { PricingReport } from "@/lib/pricing/report";
 import { Hull } from "../../deals/_structure/hull/Hull";
 import { waterLine } from "../../deals/_structure/hull/law";

@@ -1,5 +1,5 @@
 import type { ClassText } from "@/lib/deals/form";
-import { typedNumber } from "@/lib/deals/typed";
+import { typedNumber } from "@/lib/platform/typed";
 import { heightOf, type Plank, placeLabels, plankPath, type View } from "./geometry";
 import styles from "./hull.module.css";
 

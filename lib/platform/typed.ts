@@ -1,4 +1,4 @@
-import type { Problem } from "../platform/errors";
+import type { Problem } from "./errors";
 
 /** A typed number with comma or point; undefined when empty, null when it is none. */
 export function typedNumber(text: string): number | null | undefined {
