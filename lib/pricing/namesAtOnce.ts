@@ -1,5 +1,6 @@
 import { defaultProbability } from "../quant/market/survivalCurve";
 import { contractLegs } from "../quant/tranche/legs";
+import { lossInside } from "../quant/tranche/lossInside";
 import { bumpedName } from "./bumps";
 import { type StrikeResponse, strikeResponses } from "./nameResponses";
 import type { PricingRequest, TrancheInput } from "./request";
@@ -86,10 +87,7 @@ export function namesAtOnce(
           recovery: (j: number) => recovered * left(j),
         };
         const then = changedValue(valuation, valued, responses, change);
-        const { attachment, detachment } = valued.input;
-        return (
-          then - today[t]! - portfolio.notional * realisedBetween(valuation, attachment, detachment, loss)
-        );
+        return then - today[t]! - portfolio.notional * realisedBetween(valuation, valued.input, loss);
       }),
     };
   });
@@ -121,9 +119,7 @@ function changedValue(
   const outstanding = new Float64Array(dates);
   for (let j = 0; j < dates; j++) {
     const change =
-      j === 0
-        ? realisedBetween(valuation, attachment, detachment, realised)
-        : upper[j - 1]![k]! - lower[j - 1]![k]!;
+      j === 0 ? realisedBetween(valuation, input, realised) : upper[j - 1]![k]! - lower[j - 1]![k]!;
     loss[j] = profile.loss[j]! + change / width;
     const isLater = j > 0 || realised > 0;
     const paidDown =
@@ -135,14 +131,8 @@ function changedValue(
 }
 
 /** What a loss realised today on top of what is realised takes from a tranche, a fraction of the pool. */
-function realisedBetween(
-  { portfolio }: Valuation,
-  attachment: number,
-  detachment: number,
-  more: number,
-): number {
-  const within = (loss: number) => Math.min(Math.max(loss - attachment, 0), detachment - attachment);
-  return within(portfolio.realisedLoss + more) - within(portfolio.realisedLoss);
+function realisedBetween({ portfolio }: Valuation, tranche: TrancheInput, more: number): number {
+  return lossInside(portfolio.realisedLoss + more, tranche) - lossInside(portfolio.realisedLoss, tranche);
 }
 
 /** Whether recoveries cannot end inside the tranche, so that their mean is all there is to know. */

@@ -1,6 +1,7 @@
 import { baseCurve } from "../quant/tranche/baseCurve";
 import { contractLegs, parSpread, upfrontAt } from "../quant/tranche/legs";
 import { type ReadingWeights, readMinima, readTail, weightsAt } from "../quant/tranche/lossCache";
+import { lossInside } from "../quant/tranche/lossInside";
 import type { QuickCache } from "./quickCache";
 import type { TrancheReport } from "./report";
 import type { CorrelationInput, TrancheInput } from "./request";
@@ -118,7 +119,7 @@ function figuresOf(
 function lossBetween({ realisedLoss }: QuickCache, low: Reading, high: Reading): Float64Array | null {
   if (!low.minima || !high.minima) return null;
   const width = high.strike - low.strike;
-  const certain = Math.min(Math.max(realisedLoss - low.strike, 0), width);
+  const certain = lossInside(realisedLoss, { attachment: low.strike, detachment: high.strike });
   const loss = new Float64Array(low.minima.length);
   for (let j = 0; j < loss.length; j++) loss[j] = (certain + high.minima[j]! - low.minima[j]!) / width;
   return loss;

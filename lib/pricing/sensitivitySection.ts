@@ -2,6 +2,7 @@ import { formatDay, parseDay } from "../quant/market/calendar";
 import { shiftZeroRates } from "../quant/market/discountCurve";
 import { defaultedName } from "../quant/market/survivalCurve";
 import type { PortfolioName } from "../quant/portfolio/portfolio";
+import { lossInside } from "../quant/tranche/lossInside";
 import { bumpedName, type NameBump } from "./bumps";
 import { type NameDifference, namesAtOnce } from "./namesAtOnce";
 import type { SensitivityReport } from "./report";
@@ -157,9 +158,9 @@ function jumpToDefault(
     const tranche = valuation.request.tranches[k]!;
     const next = then?.[k];
     if (value === null || next === null || next === undefined) return null;
-    const clamp = (loss: number) =>
-      Math.min(Math.max(loss - tranche.attachment, 0), tranche.detachment - tranche.attachment);
-    const paid = clamp(moved!.portfolio.realisedLoss) - clamp(valuation.portfolio.realisedLoss);
+    const paid =
+      lossInside(moved!.portfolio.realisedLoss, tranche) -
+      lossInside(valuation.portfolio.realisedLoss, tranche);
     return next - value - paid * valuation.portfolio.notional;
   });
 }

@@ -2,6 +2,7 @@ import { parSpread as namesSpread } from "../quant/market/defaultSwap";
 import { defaultedName } from "../quant/market/survivalCurve";
 import type { PortfolioName } from "../quant/portfolio/portfolio";
 import { parSpread } from "../quant/tranche/legs";
+import { lossInside } from "../quant/tranche/lossInside";
 import { bumpedName } from "./bumps";
 import type { PricingProblem } from "./problem";
 import { checkRequest } from "./refusals";
@@ -69,9 +70,8 @@ function shockedClass(
   if (!valued) return { id: tranche.id, value: null, expectedLoss: null, parSpread: null };
   const { notional } = moved.portfolio;
   const width = tranche.detachment - tranche.attachment;
-  const inside = (loss: number) => Math.min(Math.max(loss - tranche.attachment, 0), width);
   const value = sellerValue(valued, width * notional);
-  const paid = (inside(realised) - inside(realisedBefore)) * notional;
+  const paid = (lossInside(realised, tranche) - lossInside(realisedBefore, tranche)) * notional;
   return {
     id: tranche.id,
     value: value === null ? null : value - paid,

@@ -1,6 +1,7 @@
 import type { Distribution } from "../quant/portfolio/distribution";
 import { type TrancheProfile, type TrancheStrikes, trancheProfile } from "../quant/tranche/expectedLoss";
 import { contractLegs, type Legs, parSpread, upfrontAt } from "../quant/tranche/legs";
+import { lossInside } from "../quant/tranche/lossInside";
 import { QUANTILE_LEVELS, standardDeviation, trancheQuantile } from "../quant/tranche/measures";
 import type { ReportWarning, TrancheReport } from "./report";
 import type { TrancheInput } from "./request";
@@ -120,7 +121,7 @@ function liveStrikes({ portfolio }: Valuation, { attachment, detachment }: Tranc
   return {
     low: Math.max(attachment - realised, 0),
     high: Math.max(detachment - realised, 0),
-    shift: Math.min(Math.max(realised - attachment, 0), detachment - attachment),
+    shift: lossInside(realised, { attachment, detachment }),
   };
 }
 
