@@ -1,11 +1,6 @@
 import type { PricingProblem } from "../pricing/problem";
 
-/** What a pricing thread is sent. */
-export interface PricingTask {
-  readonly request: unknown;
-}
-
-/** What it answers: the report's text (one stringification, the same bits everywhere), or the problems. */
+/** What a pricing thread answers: the report's text (one stringification, the same bits everywhere), or the problems. */
 export type PricingAnswer =
   | { readonly ok: true; readonly report: string; readonly milliseconds: number }
   | { readonly ok: false; readonly problems: readonly PricingProblem[] };

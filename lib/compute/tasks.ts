@@ -11,11 +11,10 @@ import type { Shock } from "../pricing/shock";
 import { type ShockedFigures, shockedFigures } from "../pricing/shockedFigures";
 import { type SizingAnswer, type SizingInput, sizeClasses } from "../pricing/sizing";
 import { answer } from "./answer";
-import type { PricingAnswer } from "./protocol";
 
 /** What a worker can be asked for, in the browser or on the server: each a pure function of its input. */
 export const tasks = {
-  price: (request: unknown): PricingAnswer => answer({ request }),
+  price: answer,
   /** Every class of a request after a shock. */
   shocked: ({ request, shock }: { readonly request: unknown; readonly shock: Shock }): ShockedFigures =>
     shockedFigures(request, shock),

@@ -1,4 +1,4 @@
-import { existsSync, readdirSync, statSync } from "node:fs";
+import { existsSync, readdirSync, renameSync, statSync } from "node:fs";
 import { join } from "node:path";
 
 const FOLDER = join(process.cwd(), "build");
@@ -8,15 +8,18 @@ export async function workerFile(): Promise<string> {
   const file = join(FOLDER, "pricingWorker.mjs");
   if (existsSync(file) && statSync(file).mtimeMs >= newestSource()) return file;
   const { build } = await import("esbuild");
+  // Several processes may bundle at once: each writes a file of its own and puts it in place whole.
+  const own = join(FOLDER, `pricingWorker.${process.pid}.mjs`);
   await build({
     entryPoints: [join(process.cwd(), "lib", "compute", "serverWorker.ts")],
-    outfile: file,
+    outfile: own,
     bundle: true,
     platform: "node",
     format: "esm",
     target: "node20",
     logLevel: "error",
   });
+  renameSync(own, file);
   return file;
 }
 

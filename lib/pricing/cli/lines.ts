@@ -1,9 +1,8 @@
 import { availableParallelism } from "node:os";
 import { Piscina } from "piscina";
+import { answer } from "../../compute/answer";
 import type { PricingAnswer } from "../../compute/protocol";
 import { workerFile } from "../../compute/workerFile";
-import { price } from "../price";
-import type { PricingProblem } from "../problem";
 
 /** What a line of input comes to: the report's text, or what is wrong. */
 export type Line =
@@ -19,10 +18,7 @@ const AHEAD = 4;
 export function pricedHere(text: string): Line {
   const read = parsed(text);
   if ("errors" in read) return read;
-  const outcome = price(read.raw);
-  return outcome.ok
-    ? { report: JSON.stringify(outcome.report) }
-    : { errors: outcome.problems.map(pathAndMessage) };
+  return lineOf(answer(read.raw));
 }
 
 /** Prices requests a line each, in their order, on every core; lines that are empty are passed over. */
@@ -62,8 +58,7 @@ async function pricedIn(
 ): Promise<Line> {
   const read = parsed(text);
   if ("errors" in read) return read;
-  const answer = await pool.run({ kind: "price", input: read.raw });
-  return answer.ok ? { report: answer.report } : { errors: answer.problems.map(pathAndMessage) };
+  return lineOf(await pool.run({ kind: "price", input: read.raw }));
 }
 
 function parsed(text: string): { readonly raw: unknown } | Extract<Line, { errors: unknown }> {
@@ -76,6 +71,7 @@ function parsed(text: string): { readonly raw: unknown } | Extract<Line, { error
   }
 }
 
-function pathAndMessage({ path, message }: PricingProblem): { path: string; message: string } {
-  return { path, message };
+function lineOf(priced: PricingAnswer): Line {
+  if (priced.ok) return { report: priced.report };
+  return { errors: priced.problems.map(({ path, message }) => ({ path, message })) };
 }
